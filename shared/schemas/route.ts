@@ -1,0 +1,37 @@
+import type { z } from 'zod'
+import type { Ability } from '../abilities'
+
+/** Who may call a route: anybody; anybody signed in, whichever brewery; or a member whose role has the ability. */
+export type Access = 'public' | 'signedIn' | { ability: Ability }
+
+export interface Answer {
+  describes: string
+  schema?: z.ZodType
+}
+
+/** All that is fixed about one route: the handler enforces it, the OpenAPI document tells it, the tests go through it. */
+export interface RouteShape {
+  method: 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE'
+  /** As in OpenAPI: `/api/vessels/{id}`. */
+  path: `/api/${string}`
+  summary: string
+  access: Access
+  params?: z.ZodType
+  query?: z.ZodType
+  body?: z.ZodType
+  answers: Record<number, Answer>
+}
+
+type Output<Schema> = Schema extends z.ZodType ? z.output<Schema> : undefined
+
+/** What a handler of this route is handed, as its schemas leave it. */
+export interface RouteInput<R extends RouteShape> {
+  params: Output<R['params']>
+  query: Output<R['query']>
+  body: Output<R['body']>
+}
+
+/** Write a route down. Keeps the exact types of its schemas. */
+export function route<const R extends RouteShape>(shape: R): R {
+  return shape
+}
