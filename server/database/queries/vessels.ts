@@ -1,0 +1,33 @@
+import { and, asc, eq, max, sql } from 'drizzle-orm'
+import { preparedOnce, type Tx } from '../client'
+import { vessels } from '../schema'
+
+export type VesselRow = typeof vessels.$inferSelect
+
+const inWalkingOrder = preparedOnce(tx => tx.select().from(vessels)
+  .where(eq(vessels.breweryId, sql.placeholder('breweryId')))
+  .orderBy(asc(vessels.walkingOrder), asc(vessels.name))
+  .prepare('vessels_in_walking_order'))
+
+/** All vessels of a brewery, in walking order. */
+export function vesselsInWalkingOrder(tx: Tx, breweryId: string): Promise<VesselRow[]> {
+  return inWalkingOrder(tx).execute({ breweryId })
+}
+
+/** One vessel, or undefined if the brewery has none of that id. */
+export async function vesselById(tx: Tx, breweryId: string, id: string): Promise<VesselRow | undefined> {
+  const [row] = await tx.select().from(vessels).where(and(eq(vessels.breweryId, breweryId), eq(vessels.id, id)))
+  return row
+}
+
+/** The same, held until the transaction ends, so that nobody changes it between the look and the deed. */
+export async function lockedVesselById(tx: Tx, breweryId: string, id: string): Promise<VesselRow | undefined> {
+  const [row] = await tx.select().from(vessels).where(and(eq(vessels.breweryId, breweryId), eq(vessels.id, id))).for('update')
+  return row
+}
+
+/** The place behind the last vessel on the walk. */
+export async function nextPlaceOnTheWalk(tx: Tx, breweryId: string): Promise<number> {
+  const [row] = await tx.select({ last: max(vessels.walkingOrder) }).from(vessels).where(eq(vessels.breweryId, breweryId))
+  return (row?.last ?? 0) + 1
+}

@@ -1,0 +1,4 @@
+export * from './audit'
+export * from './breweries'
+export * from './cellar'
+export * from './people'
