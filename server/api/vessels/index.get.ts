@@ -1,0 +1,4 @@
+import { ROUTES } from '#shared/schemas/routes'
+import { listVessels } from '#server/commands/listVessels'
+
+export default defineBreweryHandler(ROUTES.listVessels, ({ work }) => listVessels(work))

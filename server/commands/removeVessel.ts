@@ -1,0 +1,26 @@
+import { and, eq } from 'drizzle-orm'
+import { Fault } from '#shared/types/fault'
+import { databaseCode } from '#server/database/door'
+import { lockedVesselById } from '#server/database/queries/vessels'
+import { vessels } from '#server/database/schema/index'
+import { presentVessel } from '#server/presenters/vessel'
+import { audit } from './audit'
+import type { Work } from './work'
+
+const FOREIGN_KEY_VIOLATION = '23503'
+
+/** Take away a vessel that was set up by mistake. One that has held beer stays for ever: its lines stand in the ledger. */
+export async function removeVessel(work: Work, id: string, version: number): Promise<void> {
+  const { tx, brewery } = work
+  const before = await lockedVesselById(tx, brewery.id, id)
+  if (!before) throw new Fault('notFound', 'There is no such vessel.')
+  if (before.version !== version) throw new Fault('stale', 'Somebody changed this vessel first.', { current: presentVessel(before) })
+  try {
+    await tx.delete(vessels).where(and(eq(vessels.breweryId, brewery.id), eq(vessels.id, id)))
+  }
+  catch (error) {
+    if (databaseCode(error) === FOREIGN_KEY_VIOLATION) throw new Fault('inUse', 'This vessel has held beer. It can be retired, not taken away.')
+    throw error
+  }
+  await audit(work, { action: 'vessel.removed', subject: { kind: 'vessel', id }, detail: { name: before.name } })
+}
