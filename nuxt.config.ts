@@ -1,14 +1,8 @@
 import { version } from './package.json'
 
 export default defineNuxtConfig({
-  compatibilityDate: '2026-07-01',
-  // A flat root: without this line a folder named `app` would silently become the source folder.
-  srcDir: '.',
-  future: { compatibilityVersion: 4 },
   modules: ['@nuxt/eslint', '@nuxtjs/tailwindcss', '@pinia/nuxt', 'nuxt-auth-utils'],
-  telemetry: false,
   devtools: { enabled: false },
-  ignore: ['tests/**', 'scripts/**', 'dev/**', 'emails/**'],
 
   app: {
     head: {
@@ -18,33 +12,27 @@ export default defineNuxtConfig({
     },
   },
   css: ['~/assets/css/fonts.css', '~/assets/css/main.css'],
-  tailwindcss: { cssPath: false, configPath: 'tailwind.config.ts', viewer: false },
 
   router: { options: { sensitive: true } },
+  runtimeConfig: { public: { version } },
+  // A flat root: without this line a folder named `app` would silently become the source folder.
+  srcDir: '.',
+  ignore: ['tests/**', 'scripts/**', 'dev/**', 'emails/**'],
+  sourcemap: false,
+  future: { compatibilityVersion: 4 },
+  features: { inlineStyles: false },
   experimental: {
     // Nothing here is cached or prerendered, and a page of one person is never another's: see the security notes in DEVELOPERS.md.
     payloadExtraction: false,
     appManifest: false,
     componentIslands: false,
   },
-  features: { inlineStyles: false },
-  sourcemap: false,
-  runtimeConfig: { public: { version } },
-
-  // The session's row and its cookie are our own (server/utils/session.ts); the module's public session route is taken off below.
-  auth: { loadStrategy: 'none' },
+  compatibilityDate: '2026-07-01',
 
   nitro: {
     experimental: { tasks: true },
     compressPublicAssets: { gzip: true, brotli: true },
     typescript: { strict: true },
-  },
-  hooks: {
-    'nitro:config'(config) {
-      config.handlers = config.handlers?.filter(handler => !handler?.route?.startsWith('/api/_auth'))
-      const pages = config.errorHandler
-      config.errorHandler = ['~/server/error.ts', ...(Array.isArray(pages) ? pages : pages ? [pages] : [])]
-    },
   },
 
   typescript: {
@@ -54,5 +42,17 @@ export default defineNuxtConfig({
       compilerOptions: { noUncheckedIndexedAccess: true, noImplicitOverride: true, noUnusedLocals: true, noUnusedParameters: true },
     },
   },
+  telemetry: false,
+  hooks: {
+    'nitro:config'(config) {
+      config.handlers = config.handlers?.filter(handler => !handler?.route?.startsWith('/api/_auth'))
+      const pages = config.errorHandler
+      config.errorHandler = ['~/server/error.ts', ...(Array.isArray(pages) ? pages : pages ? [pages] : [])]
+    },
+  },
+
+  // The session's row and its cookie are our own (server/utils/session.ts); the module's public session route is taken off below.
+  auth: { loadStrategy: 'none' },
   eslint: { config: { stylistic: true, standalone: true } },
+  tailwindcss: { cssPath: false, configPath: 'tailwind.config.ts', viewer: false },
 })

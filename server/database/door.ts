@@ -104,11 +104,21 @@ async function transaction<T>(database: Database, run: (tx: Tx, client: pg.PoolC
   }
   catch (error) {
     // A connection that cannot even roll back is thrown away: nothing of this brewery may stay on it.
-    await client.query('rollback').catch(() => { broken = true })
+    broken = !await rolledBack(client)
     throw unavailable(error) ? new Fault('unavailable', 'The database does not answer. Try again in a moment.', { retryAfterSeconds: 5 }) : error
   }
   finally {
     client.release(broken)
+  }
+}
+
+async function rolledBack(client: pg.PoolClient): Promise<boolean> {
+  try {
+    await client.query('rollback')
+    return true
+  }
+  catch {
+    return false
   }
 }
 
@@ -124,8 +134,8 @@ async function connect(database: Database): Promise<pg.PoolClient> {
 /** Whether an error says that the server is away, shutting down or overloaded, rather than that something is wrong with the statement. */
 function unavailable(error: unknown): boolean {
   const code = databaseCode(error)
-  return code !== undefined && (/^(08|53|57P)/.test(code) || ['ECONNREFUSED', 'ECONNRESET', 'EPIPE', 'ETIMEDOUT', 'ENOTFOUND'].includes(code))
-    || error instanceof Error && /^Connection terminated/.test(error.message)
+  if (code !== undefined) return /^(08|53|57P)/.test(code) || ['ECONNREFUSED', 'ECONNRESET', 'EPIPE', 'ETIMEDOUT', 'ENOTFOUND'].includes(code)
+  return error instanceof Error && /^Connection terminated/.test(error.message)
 }
 
 /** The code of PostgreSQL or of the socket behind an error, also where the query builder has wrapped it. */

@@ -39,4 +39,3 @@ export async function anyBrewery(tx: Tx): Promise<boolean> {
   const rows = await tx.select({ id: breweries.id }).from(breweries).limit(1)
   return rows.length > 0
 }
-
