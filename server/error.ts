@@ -1,4 +1,4 @@
-import { getRequestHeader, send, type H3Error, type H3Event } from 'h3'
+import { getRequestHeader, send, setResponseHeader, type H3Error, type H3Event } from 'h3'
 import { faultOf, problemOf, writeProblem } from './utils/problem'
 import { useLog } from './utils/log'
 
@@ -8,8 +8,9 @@ import { useLog } from './utils/log'
  */
 export default async function (error: H3Error, event: H3Event): Promise<void> {
   const fault = faultOf(error)
+  setResponseHeader(event, 'cache-control', 'no-store')
   if (fault.code === 'failed' && !event.path.startsWith('/__nuxt_error')) {
-    useLog().error({ err: error.cause ?? error, requestId: event.context.requestId }, 'a request failed')
+    useLog().error({ err: error.cause instanceof Error ? error.cause : error, requestId: event.context.requestId }, 'a request failed')
   }
   if (!wantsPage(event)) {
     await send(event, writeProblem(event, error))
@@ -21,7 +22,7 @@ export default async function (error: H3Error, event: H3Event): Promise<void> {
   error.message = title
   error.data = undefined
   error.cause = undefined
-  error.stack = ''
+  Object.defineProperty(error, 'stack', { value: '' })
   error.unhandled = false
   error.fatal = false
 }

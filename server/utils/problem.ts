@@ -37,15 +37,22 @@ export function problemOf(error: unknown): Problem {
   }
 }
 
+/** What the framework itself refuses, and what a page hands on that the API refused it: told by the status alone. */
+const BY_STATUS: Partial<Record<number, { code: ProblemCode, detail: string }>> = {
+  400: { code: 'unreadable', detail: 'This could not be read.' },
+  401: { code: 'signedOut', detail: 'You are not signed in, or no longer.' },
+  403: { code: 'forbidden', detail: 'Your role does not allow this here.' },
+  404: { code: 'notFound', detail: 'There is nothing under this address.' },
+  405: { code: 'methodNotAllowed', detail: 'This address does not take that method.' },
+  503: { code: 'unavailable', detail: 'The database does not answer. Try again in a moment.' },
+}
+
 /** The fault behind an error; for whatever we did not throw ourselves, one that tells nothing. */
 export function faultOf(error: unknown): Fault {
   if (error instanceof Fault) return error
   if (error instanceof Error && error.cause instanceof Fault) return error.cause
-  if (isError(error) && !error.unhandled) {
-    if (error.statusCode === 404) return new Fault('notFound', 'There is nothing under this address.')
-    if (error.statusCode === 405) return new Fault('methodNotAllowed', 'This address does not take that method.')
-    if (error.statusCode === 400) return new Fault('unreadable', 'This could not be read.')
-  }
+  const known = isError(error) ? BY_STATUS[error.statusCode] : undefined
+  if (known) return new Fault(known.code, known.detail)
   return new Fault('failed', 'Something went wrong here. It has been noted; try again in a moment.')
 }
 

@@ -5,7 +5,9 @@ import { keyedHash } from '../../server/security/secrets'
 import { freshDatabase, type TestDatabase } from '../support/database'
 
 let db: TestDatabase
-beforeAll(async () => { db = await freshDatabase() })
+beforeAll(async () => {
+  db = await freshDatabase()
+})
 afterAll(() => db?.drop())
 
 const start = Date.parse('2026-09-14T06:00:00Z')
