@@ -10,5 +10,5 @@ export interface Work {
   /** The application's clock. */
   now: Date
   /** The brewery's civil date at `now`. */
-  today: string
+  readonly today: string
 }

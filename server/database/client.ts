@@ -32,6 +32,8 @@ export function openDatabase(url: string, { connections = 10, onIdleError = () =
     lock_timeout: 5_000,
     idle_in_transaction_session_timeout: 30_000,
     application_name: 'undercroft',
+    // What is asked together goes out together: a transaction is begun and its brewery opened in one round trip.
+    pipeline: true,
   })
   pool.on('error', onIdleError)
   // A connection that breaks while it is lent out says so to whoever uses it; without a listener it would end the process as well.

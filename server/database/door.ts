@@ -16,31 +16,27 @@ export interface Entered {
  * Ends with everything kept, or, when `run` throws, with nothing.
  */
 export function withBrewery<T>(database: Database, who: { breweryId: string, personId?: string }, run: (tx: Tx) => Promise<T>): Promise<T> {
-  return transaction(database, async (tx) => {
-    await tx.execute(sql`select set_config('undercroft.brewery', ${who.breweryId}, true), set_config('undercroft.person', ${who.personId ?? ''}, true)`)
-    return run(tx)
-  })
+  return transaction(database, client => client.query(OPEN, [who.breweryId, who.personId ?? '']), run)
 }
+
+const OPEN = `select set_config('undercroft.brewery', $1, true), set_config('undercroft.person', $2, true)`
 
 /**
  * The same door for a request: the session says for which brewery it opens. `entered` is null for a session that is
  * none or over; then no brewery is open.
  */
 export function withSession<T>(database: Database, sessionHash: string, now: Date, run: (entered: Entered | null, tx: Tx) => Promise<T>): Promise<T> {
-  return transaction(database, async (tx, client) => run(await enter(client, sessionHash, now), tx))
+  return transaction(database, client => enter(client, sessionHash, now), (tx, entered) => run(entered, tx))
 }
 
 /** One transaction over the tables that belong to no brewery: people, sessions, tokens, attempts, breweries. No tenant row is seen in it. */
 export function withoutBrewery<T>(database: Database, run: (tx: Tx) => Promise<T>): Promise<T> {
-  return transaction(database, run)
+  return transaction(database, () => null, run)
 }
 
 /** The same, with the person's own memberships in view. */
 export function withPerson<T>(database: Database, personId: string, run: (tx: Tx) => Promise<T>): Promise<T> {
-  return transaction(database, async (tx) => {
-    await openPerson(tx, personId)
-    return run(tx)
-  })
+  return transaction(database, client => client.query(OPEN, ['', personId]), run)
 }
 
 /** Bring a person's own memberships into view of an open transaction. */
@@ -93,12 +89,13 @@ async function enter(client: pg.PoolClient, sessionHash: string, now: Date): Pro
   return { user: { id, name, email }, member }
 }
 
-async function transaction<T>(database: Database, run: (tx: Tx, client: pg.PoolClient) => Promise<T>): Promise<T> {
+/** @param open the statement that goes out together with `begin`, and inside it */
+async function transaction<Opened, T>(database: Database, open: (client: pg.PoolClient) => Opened, run: (tx: Tx, opened: Awaited<Opened>) => Promise<T>): Promise<T> {
   const client = await connect(database)
   let broken = false
   try {
-    await client.query('begin')
-    const result = await run(ormOf(client), client)
+    const [, opened] = await Promise.all([client.query('begin'), open(client)])
+    const result = await run(ormOf(client), opened)
     await client.query('commit')
     return result
   }

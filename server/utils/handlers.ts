@@ -107,7 +107,10 @@ function requireMember(entered: Entered | null, tx: Tx, now: Date): Work {
     person: user,
     role: member.role,
     now,
-    today: civilDateIn(member.timeZone, now.getTime()),
+    // Asked for by few, and dear: worked out when it is.
+    get today() {
+      return civilDateIn(member.timeZone, now.getTime())
+    },
   }
 }
 

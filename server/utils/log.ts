@@ -10,7 +10,7 @@ export function useLog(): Logger {
     base: { pid: process.pid },
     timestamp: pino.stdTimeFunctions.isoTime,
     serializers: { err: describe },
-  })
+  }, pino.destination({ sync: false }))
   return log
 }
 

@@ -1,7 +1,7 @@
 import pg from 'pg'
 import { expect, inject, it } from 'vitest'
 import { migrateDatabase } from '../../server/database/migrate'
-import { onDatabase } from '../support/cluster'
+import { onDatabase } from '../support/addresses'
 
 it('migrates once, however many start at the same time', async () => {
   const cluster = inject('cluster')

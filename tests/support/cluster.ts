@@ -2,6 +2,8 @@ import pg from 'pg'
 import type { TestProject } from 'vitest/node'
 import { migrateDatabase } from '../../server/database/migrate'
 import { loadDemo } from '../../dev/loadDemo'
+import { onDatabase } from './addresses'
+import { DEMO_MORNING } from './demoMorning'
 import { startTestCluster, type TestClusterAddresses } from '../../scripts/lib/testCluster'
 
 declare module 'vitest' {
@@ -9,9 +11,6 @@ declare module 'vitest' {
     cluster: TestClusterAddresses
   }
 }
-
-/** The instant that the tests' demo stands at: the morning of its own day. */
-export const DEMO_MORNING = '2026-09-14T06:00:00.000Z'
 
 /**
  * One cluster for all tests that need PostgreSQL: the one that `scripts/test` has started, or one of our own. In it stand
@@ -24,13 +23,6 @@ export default async function setup(project: TestProject): Promise<() => Promise
   await makeTemplates(addresses)
   project.provide('cluster', addresses)
   return async () => own?.remove()
-}
-
-/** The same address for another database of the cluster. */
-export function onDatabase(address: string, name: string): string {
-  const url = new URL(address)
-  url.pathname = `/${name}`
-  return url.href
 }
 
 async function makeTemplates(addresses: TestClusterAddresses): Promise<void> {

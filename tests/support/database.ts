@@ -2,7 +2,7 @@ import { randomBytes } from 'node:crypto'
 import pg from 'pg'
 import { inject } from 'vitest'
 import { openDatabase, type Database } from '../../server/database/client'
-import { onDatabase } from './cluster'
+import { onDatabase } from './addresses'
 
 export interface TestDatabase {
   name: string
