@@ -3,7 +3,7 @@ import { defineVitestProject } from '@nuxt/test-utils/config'
 import { defineConfig } from 'vitest/config'
 
 /** A project that works on a real PostgreSQL: see tests/support/cluster.ts. */
-const onCluster = { environment: 'node', globalSetup: ['tests/support/cluster.ts'], testTimeout: 30_000, hookTimeout: 120_000 } as const
+const onCluster = { environment: 'node' as const, globalSetup: ['tests/support/cluster.ts'], testTimeout: 30_000, hookTimeout: 120_000 }
 
 export default defineConfig({
   test: {

@@ -5,6 +5,7 @@
 export default defineNitroPlugin((nitro) => {
   // Read now, so that a wrong environment stops the start and not the first request.
   settings()
-  process.once('disconnect', () => process.kill(process.pid, 'SIGTERM'))
+  // At once: whoever would wait for an orderly end is gone, and what was not committed was not answered either.
+  process.once('disconnect', () => process.kill(process.pid, 'SIGKILL'))
   nitro.hooks.hook('close', () => useDatabase().close())
 })

@@ -26,7 +26,7 @@ const Settings = z.object({
   const origin = read.UNDERCROFT_ORIGIN ?? `http://localhost:${read.PORT}`
   const secure = origin.startsWith('https:')
   if (read.UNDERCROFT_DEMO === 'load' && (secure || !isLoopback(read.HOST))) {
-    ctx.addIssue({ code: 'custom', path: ['UNDERCROFT_DEMO'], message: 'the demo opens with a known password: it is loaded only where HOST is loopback and the origin is http' })
+    ctx.addIssue({ code: 'custom', path: ['UNDERCROFT_DEMO'], message: 'the demo opens with a known password: it is loaded only where HOST is loopback and the origin is http; set UNDERCROFT_DEMO=none' })
     return z.NEVER
   }
   return {
