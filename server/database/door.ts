@@ -132,7 +132,9 @@ async function connect(database: Database): Promise<pg.PoolClient> {
 function unavailable(error: unknown): boolean {
   const code = databaseCode(error)
   if (code !== undefined) return /^(08|53|57P)/.test(code) || ['ECONNREFUSED', 'ECONNRESET', 'EPIPE', 'ETIMEDOUT', 'ENOTFOUND'].includes(code)
-  return error instanceof Error && /^Connection terminated/.test(error.message)
+  // What the driver says of a connection that broke bears no code.
+  if (!(error instanceof Error)) return false
+  return /^Connection terminated|connection error/.test(error.message) || unavailable(error.cause)
 }
 
 /** The code of PostgreSQL or of the socket behind an error, also where the query builder has wrapped it. */

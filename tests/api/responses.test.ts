@@ -126,16 +126,16 @@ describe('with the database away', () => {
     try {
       const who = await signedIn(cut.origin, 'owner@sallowmere.example')
       await cut.db.asSuperuser(`select pg_terminate_backend(pid) from pg_stat_activity where usename = 'undercroft_app' and datname = $1`, [cut.db.name])
-      await cut.db.asSuperuser('alter role undercroft_app connection limit 0')
+      await cut.db.asSuperuser(`alter database ${cut.db.name} connection limit 0`)
       const replies = [await who.get('/api/vessels'), await who.get('/api/health'), await who.get('/cellar', PAGE), await who.post('/api/auth/sign-in', { email: 'a@b.example', password: 'x' })]
-      await cut.db.asSuperuser('alter role undercroft_app connection limit -1')
+      await cut.db.asSuperuser(`alter database ${cut.db.name} connection limit -1`)
       expect(replies.map(reply => reply.status)).toEqual([503, 503, 503, 503])
       expect(replies[0]?.headers.get('retry-after')).toBe('5')
       for (const reply of replies) expect(reply.text).not.toMatch(/ECONN|postgres|undercroft_app|role|stack|node_modules|127\.0\.0\.1:/i)
       expect((await who.get('/api/vessels')).status).toBe(200)
     }
     finally {
-      await cut.db.asSuperuser('alter role undercroft_app connection limit -1')
+      await cut.db.asSuperuser(`alter database ${cut.db.name} connection limit -1`)
       await cut.stop()
     }
   })
