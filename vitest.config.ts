@@ -10,7 +10,7 @@ export default defineConfig({
     maxWorkers: 2,
     projects: [
       // An odd time zone, so that nothing leans on the machine's own.
-      { plugins: [vue()], test: { name: 'unit', include: ['tests/unit/**/*.test.ts'], environment: 'node', env: { TZ: 'Pacific/Chatham', UNDERCROFT_LOG: 'silent' } } },
+      { plugins: [vue()], test: { name: 'unit', include: ['tests/{unit,reference}/**/*.test.ts'], environment: 'node', testTimeout: 30_000, env: { TZ: 'Pacific/Chatham', UNDERCROFT_LOG: 'silent' } } },
       { test: { ...onCluster, name: 'database', include: ['tests/database/**/*.test.ts'] } },
       { test: { ...onCluster, name: 'api', include: ['tests/api/**/*.test.ts'] } },
       await defineVitestProject({ test: { name: 'nuxt', include: ['tests/nuxt/**/*.test.ts'], environment: 'nuxt' } }),

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { expect, it } from 'vitest'
-import { addDays, civilDateIn, daysBetween, mondayOf } from '../../shared/cellar/civilDate'
+import { addDays, civilDateIn, civilDateOf, daysBetween, epochDay, mondayOf } from '../../shared/cellar/civilDate'
 import { weeksBetween } from '../../dev/loadDemo'
 
 it('knows what day it is where the brewery is, on both sides of midnight and of the clock change', () => {
@@ -14,6 +14,11 @@ const day = fc.integer({ min: 0, max: 60_000 }).map(n => addDays('1970-01-01', n
 
 it('counts days forth and back alike', () => {
   fc.assert(fc.property(day, fc.integer({ min: -40_000, max: 40_000 }), (date, days) => daysBetween(date, addDays(date, days)) === days))
+})
+
+it('counts the days since 1970 as the date library does', () => {
+  fc.assert(fc.property(day, date => epochDay(date) === daysBetween('1970-01-01', date) && civilDateOf(epochDay(date)) === date))
+  expect([epochDay('1970-01-01'), epochDay('1969-12-31'), epochDay('2024-02-29')]).toEqual([0, -1, 19_782])
 })
 
 it('moves the demo by whole weeks, so that its day falls into the week of today', () => {
