@@ -72,7 +72,7 @@ export const walls = [
   },
   {
     name: 'walls/commands',
-    files: ['server/{commands,presenters,security}/**/*.ts'],
+    files: ['server/{commands,presenters,security,ledgerFile}/**/*.ts'],
     rules: {
       '@typescript-eslint/no-restricted-imports': imports(deny('Commands know nothing of HTTP or of pages.', HTTP, FACE, ASIDE)),
       'no-restricted-globals': banned([...serverNames, ...faceNames, 'fetch'], 'Commands know nothing of HTTP: what they need comes in as an argument.'),

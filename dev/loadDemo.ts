@@ -8,6 +8,9 @@ import { closeDays } from '#server/commands/closeDays'
 import { createBeer } from '#server/commands/createBeer'
 import { createVessel } from '#server/commands/createVessel'
 import { foundBrewery } from '#server/commands/foundBrewery'
+import { importLedger } from '#server/commands/importLedger'
+import { recordResize, recordVesselEvent } from '#server/commands/recordVesselEvent'
+import { writeLedgerFile } from '#server/ledgerFile/write'
 import type { Tx } from '#server/database/client'
 import { openDatabase } from '#server/database/client'
 import { withoutBrewery } from '#server/database/door'
@@ -33,6 +36,7 @@ export interface LoadOptions {
 /** Load the demo's breweries into an empty database, with the commands that a user's own data goes through. Does nothing where a brewery is already. */
 export async function loadDemo({ databaseUrl, now, demoFolder = fileURLToPath(new URL('.', import.meta.url)) }: LoadOptions): Promise<{ loaded: boolean, signIns: SignInLine[] }> {
   const demo = DemoCellar.parse(JSON.parse(await readFile(`${demoFolder}/cellar.json`, 'utf8')))
+  const ledger = await readFile(`${demoFolder}/ledger.csv`, 'utf8')
   const signIns = [demo, demo.second].flatMap(file => file.people.map(({ email, role }) => ({ email, role, brewery: file.brewery.name })))
   const database = openDatabase(databaseUrl, { connections: 2 })
   try {
@@ -44,8 +48,8 @@ export async function loadDemo({ databaseUrl, now, demoFolder = fileURLToPath(ne
     const passwordHash = await hashPassword(DEMO_PASSWORD)
     await withoutBrewery(database, async (tx) => {
       const shiftDays = weeksBetween(demo.demoDay, civilDateIn(demo.brewery.timeZone, now.getTime()))
-      await loadBrewery(tx, demo, { now, shiftDays, passwordHash })
-      await loadBrewery(tx, demo.second, { now, shiftDays, passwordHash })
+      await loadBrewery(tx, demo, ledger, { now, shiftDays, passwordHash })
+      await loadBrewery(tx, demo.second, writeLedgerFile(demo.second.ledger), { now, shiftDays, passwordHash })
     })
     return { loaded: true, signIns }
   }
@@ -59,7 +63,12 @@ export function weeksBetween(demoDay: string, today: string): number {
   return daysBetween(mondayOf(demoDay), mondayOf(today))
 }
 
-async function loadBrewery(tx: Tx, file: BreweryFile, { now, shiftDays, passwordHash }: { now: Date, shiftDays: number, passwordHash: string }): Promise<void> {
+/** Every day that stands in a text, moved; codes and names of runs are no days. */
+function moveDays(text: string, shiftDays: number): string {
+  return text.replace(/\b\d{4}-\d{2}-\d{2}\b/g, date => addDays(date, shiftDays))
+}
+
+async function loadBrewery(tx: Tx, file: BreweryFile, ledger: string, { now, shiftDays, passwordHash }: { now: Date, shiftDays: number, passwordHash: string }): Promise<void> {
   const owner = file.people.find(person => person.role === 'owner')
   if (!owner) throw new Error(`the demo's ${file.brewery.name} has no owner`)
   const { name: breweryName, timeZone, sendAt, closedDays } = file.brewery
@@ -73,7 +82,14 @@ async function loadBrewery(tx: Tx, file: BreweryFile, { now, shiftDays, password
 
   const beerIds = new Map<string, string>()
   for (const beer of file.beers) beerIds.set(beer.code, (await createBeer(work, beer)).id)
+  const vesselIds = new Map<string, string>()
   for (const { beer, ...vessel } of file.vessels) {
-    await createVessel(work, { id: newId(), ...vessel }, beer === null ? null : beerIds.get(beer) ?? null)
+    const made = await createVessel(work, { id: newId(), ...vessel }, beer === null ? null : beerIds.get(beer) ?? null)
+    vesselIds.set(vessel.name, made.vessel.id)
   }
+  const idOf = (vessel: string) => vesselIds.get(vessel) ?? ''
+
+  await importLedger(work, moveDays(ledger, shiftDays), { dryRun: false })
+  for (const { vessel, on, fromLitres, toLitres } of file.resizes) await recordResize(work, idOf(vessel), addDays(on, shiftDays), fromLitres, toLitres)
+  for (const { vessel, on, kind, reason } of file.vesselEvents) await recordVesselEvent(work, idOf(vessel), { id: newId(), kind, occurredOn: addDays(on, shiftDays), reason })
 }

@@ -3,8 +3,8 @@ import { Fault } from '#shared/types/fault'
 import { databaseCode } from '#server/database/door'
 import { lockedVesselById } from '#server/database/queries/vessels'
 import { vessels } from '#server/database/schema/index'
-import { presentVessel } from '#server/presenters/vessel'
 import { audit } from './audit'
+import { noSuchVessel, readVessel } from './readVessel'
 import type { Work } from './work'
 
 const FOREIGN_KEY_VIOLATION = '23503'
@@ -13,8 +13,8 @@ const FOREIGN_KEY_VIOLATION = '23503'
 export async function removeVessel(work: Work, id: string, version: number): Promise<void> {
   const { tx, brewery } = work
   const before = await lockedVesselById(tx, brewery.id, id)
-  if (!before) throw new Fault('notFound', 'There is no such vessel.')
-  if (before.version !== version) throw new Fault('stale', 'Somebody changed this vessel first.', { current: presentVessel(before) })
+  if (!before) throw noSuchVessel()
+  if (before.version !== version) throw new Fault('stale', 'Somebody changed this vessel first.', { current: await readVessel(work, id) })
   try {
     await tx.delete(vessels).where(and(eq(vessels.breweryId, brewery.id), eq(vessels.id, id)))
   }

@@ -11,8 +11,9 @@ import { withSession, type Entered } from '#server/database/door'
 import { mayStillEnter } from '#server/database/queries/people'
 import { useClock } from './clock'
 import { useDatabase } from './database'
+import { endProgress } from './progress'
 import { readInput } from './readInput'
-import { readJson } from './requestBody'
+import { readJson, readText } from './requestBody'
 import { sessionHashOf } from './sessionCookie'
 
 /** An answer with a status other than 200. */
@@ -119,7 +120,8 @@ function signedOut(): Fault {
 }
 
 function bodyOf(route: RouteShape, event: H3Event): Promise<unknown> {
-  return route.body ? readJson(event) : Promise.resolve(undefined)
+  if (route.text) return readText(event, route.text)
+  return route.method === 'GET' ? Promise.resolve(undefined) : readJson(event)
 }
 
 function inputOf<R extends RouteShape>(route: R, event: H3Event, body: unknown): RouteInput<R>
@@ -128,6 +130,7 @@ function inputOf(route: RouteShape, event: H3Event, body: unknown): RouteInput<R
     params: route.params && paramsOf(route.params, event),
     query: route.query && readInput(route.query, getQuery(event)),
     body: route.body && readInput(route.body, body),
+    text: route.text && typeof body === 'string' ? body : undefined,
   }
 }
 
@@ -138,7 +141,8 @@ function paramsOf(schema: z.ZodType, event: H3Event): unknown {
   return read.data
 }
 
-function reply<T>(event: H3Event, result: T | Answer<T>): T {
+function reply<T>(event: H3Event, result: T | Answer<T>): T | undefined {
+  if (endProgress(event, result)) return undefined
   if (!(result instanceof Answer)) return result
   setResponseStatus(event, result.status)
   return result.body

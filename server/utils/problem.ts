@@ -14,6 +14,7 @@ const TITLES: Record<ProblemCode, string> = {
   stale: 'Somebody was first',
   sameIdOtherContent: 'Kept already, and other',
   inUse: 'In use',
+  alreadyDone: 'Done already',
   tooLarge: 'Too large',
   unsupportedType: 'Not a kind that is taken',
   invalid: 'Something is not right',
@@ -34,6 +35,7 @@ export function problemOf(error: unknown): Problem {
     code: fault.code,
     errors: fault.errors,
     ...(fault.current !== undefined && { current: fault.current }),
+    ...fault.members,
   }
 }
 

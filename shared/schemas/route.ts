@@ -19,9 +19,12 @@ export interface RouteShape {
   params?: z.ZodType
   query?: z.ZodType
   body?: z.ZodType
+  /** Of a route that takes a file instead of JSON: its media type. It is read as a whole, as text. */
+  text?: 'text/csv'
   answers: Record<number, Answer>
 }
 
+type TextOf<Type> = Type extends string ? string : undefined
 type Output<Schema> = Schema extends z.ZodType ? z.output<Schema> : undefined
 
 /** What a handler of this route is handed, as its schemas leave it. */
@@ -29,6 +32,8 @@ export interface RouteInput<R extends RouteShape> {
   params: Output<R['params']>
   query: Output<R['query']>
   body: Output<R['body']>
+  /** Of a route that takes a file. */
+  text: TextOf<R['text']>
 }
 
 /** Write a route down. Keeps the exact types of its schemas. */

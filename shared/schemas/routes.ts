@@ -1,9 +1,13 @@
 import { z } from 'zod'
 import { ChooseBrewery, Me, SignIn } from './auth'
+import { BeerView, BrewChange, BrewView } from './brew'
 import { Health } from './health'
+import { ActInput, ActRecorded, ActReversed, ActView, ImportQuery, ImportReport, MovementReversed, ReverseInput, VesselLedger } from './ledger'
 import { route, type RouteShape } from './route'
 import { SetUp, SetUpState } from './setUp'
+import { OnQuery, StackView } from './stack'
 import { VesselChange, VesselCreate, VesselParams, VesselRemove, VesselView, VesselsQuery } from './vessel'
+import { VesselEventInput, VesselEventView } from './vesselEvent'
 
 const nothing = z.strictObject({})
 const done = { 204: { describes: 'Done. Nothing to say.' } }
@@ -61,5 +65,61 @@ export const ROUTES = {
   removeVessel: route({
     method: 'DELETE', path: '/api/vessels/{id}', summary: 'Take away a vessel that never held beer', access: { ability: 'editVessels' }, params: VesselParams, query: z.strictObject({ version: z.coerce.number().pipe(VesselRemove.shape.version) }),
     answers: done,
+  }),
+  readVessel: route({
+    method: 'GET', path: '/api/vessels/{id}', summary: 'One vessel', access: { ability: 'readCellar' }, params: VesselParams, query: VesselsQuery,
+    answers: { 200: { describes: 'The vessel.', schema: VesselView } },
+  }),
+  readStack: route({
+    method: 'GET', path: '/api/vessels/{id}/stack', summary: 'What is in a vessel at the end of a day, cohort by cohort', access: { ability: 'readCellar' }, params: VesselParams, query: OnQuery,
+    answers: { 200: { describes: 'The stack, oldest first.', schema: StackView } },
+  }),
+  readVesselLedger: route({
+    method: 'GET', path: '/api/vessels/{id}/ledger', summary: 'The lines and notes of a vessel, newest first', access: { ability: 'readCellar' }, params: VesselParams,
+    answers: { 200: { describes: 'The ledger of the vessel.', schema: VesselLedger } },
+  }),
+  listVesselEvents: route({
+    method: 'GET', path: '/api/vessels/{id}/events', summary: 'What befell a vessel besides its beer, newest first', access: { ability: 'readCellar' }, params: VesselParams,
+    answers: { 200: { describes: 'The events.', schema: z.array(VesselEventView) } },
+  }),
+  recordVesselEvent: route({
+    method: 'POST', path: '/api/vessels/{id}/events', summary: 'Record what befell a vessel', access: { ability: 'record' }, params: VesselParams, body: VesselEventInput,
+    answers: { 201: { describes: 'Kept.', schema: VesselEventView }, 200: { describes: 'Was kept already, with the same content.', schema: VesselEventView } },
+  }),
+  recordAct: route({
+    method: 'POST', path: '/api/acts', summary: 'Record movements that belong together, all or none', access: { ability: 'record' }, body: ActInput,
+    answers: { 201: { describes: 'Kept, and what it changed.', schema: ActRecorded }, 200: { describes: 'Was kept already, with the same content.', schema: ActRecorded } },
+  }),
+  readAct: route({
+    method: 'GET', path: '/api/acts/{id}', summary: 'One act with its movements', access: { ability: 'readCellar' }, params: VesselParams,
+    answers: { 200: { describes: 'The act.', schema: ActView } },
+  }),
+  reverseMovement: route({
+    method: 'POST', path: '/api/movements/{id}/reverse', summary: 'Strike one movement out', access: { ability: 'reverse' }, params: VesselParams, body: ReverseInput,
+    answers: { 201: { describes: 'Struck out, and what that changed.', schema: MovementReversed }, 200: { describes: 'Was struck out already, by the same request.', schema: MovementReversed } },
+  }),
+  reverseAct: route({
+    method: 'POST', path: '/api/acts/{id}/reverse', summary: 'Strike out every movement of an act that still stands', access: { ability: 'reverse' }, params: VesselParams, body: ReverseInput,
+    answers: { 201: { describes: 'Struck out, and what that changed.', schema: ActReversed }, 200: { describes: 'Was struck out already, by the same request.', schema: ActReversed } },
+  }),
+  importLedger: route({
+    method: 'POST', path: '/api/ledger/import', summary: 'Take in a ledger as CSV, all of it or nothing', access: { ability: 'importLedger' }, query: ImportQuery, text: 'text/csv',
+    answers: { 200: { describes: 'What was found and, unless it was a dry run, kept.', schema: ImportReport } },
+  }),
+  exportLedger: route({
+    method: 'GET', path: '/api/ledger.csv', summary: 'The whole ledger as CSV', access: { ability: 'exportLedger' },
+    answers: { 200: { describes: 'The ledger, with its notes and reversals.' } },
+  }),
+  listBrews: route({
+    method: 'GET', path: '/api/brews', summary: 'All brews, newest first, and where each still is', access: { ability: 'readCellar' },
+    answers: { 200: { describes: 'The brews.', schema: z.array(BrewView) } },
+  }),
+  changeBrew: route({
+    method: 'PATCH', path: '/api/brews/{id}', summary: 'Say which beer a brew is of, or how well its day is known', access: { ability: 'editVessels' }, params: VesselParams, body: BrewChange,
+    answers: { 200: { describes: 'Changed.', schema: BrewView } },
+  }),
+  listBeers: route({
+    method: 'GET', path: '/api/beers', summary: 'The beers of the brewery', access: { ability: 'readCellar' },
+    answers: { 200: { describes: 'The beers.', schema: z.array(BeerView) } },
   }),
 } as const satisfies Record<string, RouteShape>

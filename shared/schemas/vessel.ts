@@ -21,7 +21,7 @@ export type VesselCreate = z.output<typeof VesselCreate>
 export const VesselChange = z.strictObject({ version: Version, ...z.object(editable).partial().shape })
 export type VesselChange = z.output<typeof VesselChange>
 
-export const VesselsQuery = z.strictObject({ on: CivilDate.optional() })
+export const VesselsQuery = z.strictObject({ on: CivilDate.optional(), layers: z.literal('true').optional() })
 export const VesselParams = z.strictObject({ id: Id })
 export const VesselRemove = z.strictObject({ version: Version })
 
@@ -45,6 +45,17 @@ export const VesselView = z.object({
   oldestCohort: z.object({ brewId: Id, brewCode: z.string(), brewedOn: CivilDate, share: z.number() }).nullable(),
   nextDraw: z.object({ drawId: Id, dueOn: CivilDate, meanAgeDays: ageDays, blocked: z.boolean() }).nullable(),
   standing: z.enum(STANDINGS),
+  /** Why it stands so, as it was recorded, and since when. */
+  standingReason: z.string().nullable(),
+  standingSince: CivilDate.nullable(),
+  fruiting: z.boolean(),
+  gravityWatch: z.boolean(),
+  volumeDoubt: z.boolean(),
+  /** Holds more than its working litres. */
+  overBrim: z.boolean(),
+  beer: z.object({ code: z.string(), name: z.string() }).nullable(),
+  /** Oldest first, if asked for. Shares of all that is in it. */
+  layers: z.array(z.object({ brewCode: z.string(), brewedOn: CivilDate, beerCode: z.string().nullable(), share: z.number() })).optional(),
   version: Version,
 })
 export type VesselView = z.output<typeof VesselView>

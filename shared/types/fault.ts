@@ -9,12 +9,15 @@ export class Fault extends Error {
   readonly errors: FieldFault[]
   readonly current: unknown
   readonly retryAfterSeconds: number | undefined
+  /** Further members of the problem that is answered. */
+  readonly members: Record<string, unknown>
 
-  constructor(readonly code: ProblemCode, detail: string, more: { errors?: FieldFault[], current?: unknown, retryAfterSeconds?: number } = {}) {
+  constructor(readonly code: ProblemCode, detail: string, more: { errors?: FieldFault[], current?: unknown, retryAfterSeconds?: number, members?: Record<string, unknown> } = {}) {
     super(detail)
     this.errors = more.errors ?? []
     this.current = more.current
     this.retryAfterSeconds = more.retryAfterSeconds
+    this.members = more.members ?? {}
   }
 }
 

@@ -11,6 +11,7 @@ export const PROBLEMS = {
   stale: 409,
   sameIdOtherContent: 409,
   inUse: 409,
+  alreadyDone: 409,
   tooLarge: 413,
   unsupportedType: 415,
   invalid: 422,
@@ -25,7 +26,9 @@ export type ProblemCode = keyof typeof PROBLEMS
 export interface FieldFault {
   field: string
   message: string
+  /** Of a file. */
   line?: number
+  column?: string
 }
 
 /** RFC 9457, with our own members: `code`, `errors`, and what a stale writer needs to see, `current`. */

@@ -34,6 +34,7 @@ it.each([
   ['a command takes a server util', 'server/commands/breach.ts', `import { useClock } from '../utils/clock'\n\nexport const x = useClock`],
   ['a command reads the clock', 'server/commands/breach.ts', 'export const x = () => new Date()'],
   ['a command takes a connection', 'server/commands/breach.ts', `import type { Database } from '#server/database/client'\n\nexport const x = (database: Database) => database.pool.query('select 1')`],
+  ['a reader of files takes h3', 'server/ledgerFile/breach.ts', `import { createError } from 'h3'\n\nexport const x = createError`],
   ['a query takes a command', 'server/database/queries/breach.ts', `import { signIn } from '#server/commands/signIn'\n\nexport const x = signIn`],
   ['a query takes a connection', 'server/database/queries/breach.ts', `import type { Database } from '../client'\n\nexport const x = (database: Database) => database.pool.query('select 1')`],
   ['a util reads the environment', 'server/utils/breach.ts', 'export const x = process.env.PORT'],

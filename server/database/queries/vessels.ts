@@ -1,16 +1,20 @@
-import { and, asc, eq, max, sql } from 'drizzle-orm'
+import { and, asc, eq, getTableColumns, max, sql } from 'drizzle-orm'
 import { preparedOnce, type Tx } from '../client'
-import { vessels } from '../schema'
+import { beers, vessels } from '../schema'
 
 export type VesselRow = typeof vessels.$inferSelect
 
-const inWalkingOrder = preparedOnce(tx => tx.select().from(vessels)
+/** A vessel with the beer it is meant for. */
+export type VesselWithBeer = VesselRow & { beerCode: string | null, beerName: string | null }
+
+const inWalkingOrder = preparedOnce(tx => tx.select({ ...getTableColumns(vessels), beerCode: beers.code, beerName: beers.name }).from(vessels)
+  .leftJoin(beers, and(eq(beers.breweryId, vessels.breweryId), eq(beers.id, vessels.beerId)))
   .where(eq(vessels.breweryId, sql.placeholder('breweryId')))
   .orderBy(asc(vessels.walkingOrder), asc(vessels.name))
   .prepare('vessels_in_walking_order'))
 
 /** All vessels of a brewery, in walking order. */
-export function vesselsInWalkingOrder(tx: Tx, breweryId: string): Promise<VesselRow[]> {
+export function vesselsInWalkingOrder(tx: Tx, breweryId: string): Promise<VesselWithBeer[]> {
   return inWalkingOrder(tx).execute({ breweryId })
 }
 

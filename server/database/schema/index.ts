@@ -1,4 +1,5 @@
 export * from './audit'
 export * from './breweries'
 export * from './cellar'
+export * from './ledger'
 export * from './people'

@@ -1,0 +1,53 @@
+import type { ActInput, ActRecorded } from '#shared/schemas/ledger'
+import { Fault } from '#shared/types/fault'
+import { breaksUnique, savepoint } from '#server/database/door'
+import { actById } from '#server/database/queries/ledger'
+import { acts, movements } from '#server/database/schema/index'
+import { presentAct } from '#server/presenters/ledger'
+import { audit } from './audit'
+import { sameAct } from './actContent'
+import { requireSound } from './actRules'
+import { readCellarState } from './cellarState'
+import { movementRowsOf } from './movementRows'
+import { whatChanged } from './whatChanged'
+import type { Work } from './work'
+
+/**
+ * Record movements that belong together: all are kept or none. The sender makes the ids: the same act again is found
+ * (`made` is false), another one under its id is refused. More than was there may be drawn, and more than fits may be
+ * filled in: the ledger keeps what it is told, and what is worked out from it carries the mark.
+ */
+export async function recordAct(work: Work, input: ActInput): Promise<{ act: ActRecorded, made: boolean }> {
+  const { tx, brewery } = work
+  if (await actById(tx, brewery.id, input.id)) return replayed(work, input)
+  const before = await readCellarState(tx, brewery.id)
+  requireSound(input, before, work.today)
+  try {
+    await savepoint(tx, async () => {
+      await tx.insert(acts).values({ breweryId: brewery.id, id: input.id, note: input.note ?? null, recordedAt: work.now, recordedBy: work.person.id })
+      await tx.insert(movements).values(await movementRowsOf(work, input))
+    })
+  }
+  catch (error) {
+    // Two tablets with one act: the second finds what the first has just kept.
+    if (breaksUnique(error, 'acts_pkey')) return replayed(work, input)
+    if (breaksUnique(error, 'movements_pkey')) throw new Fault('sameIdOtherContent', 'A movement with one of these ids is kept already, in another act.')
+    throw error
+  }
+  await audit(work, { action: 'act.recorded', subject: { kind: 'act', id: input.id } })
+  return { act: await describeAct(work, input.id, before), made: true }
+}
+
+async function replayed(work: Work, input: ActInput): Promise<{ act: ActRecorded, made: boolean }> {
+  const { tx, brewery } = work
+  const known = await actById(tx, brewery.id, input.id)
+  if (!known || !await sameAct(work, known, input)) throw new Fault('sameIdOtherContent', 'An act with this id is kept already, and it is another one.')
+  return { act: await describeAct(work, input.id), made: false }
+}
+
+async function describeAct({ tx, brewery, today }: Work, id: string, before?: Awaited<ReturnType<typeof readCellarState>>): Promise<ActRecorded> {
+  const after = await readCellarState(tx, brewery.id)
+  const known = await actById(tx, brewery.id, id)
+  if (!known) throw new Error('an act that was just kept is not there')
+  return { ...presentAct(known, after, []), changed: before ? whatChanged(before, after, today) : [] }
+}
