@@ -12,12 +12,12 @@ export interface TestClusterAddresses {
   backup: string
 }
 
-/** A fast cluster in a folder of its own, which is gone with it. */
-export async function startTestCluster({ within = tmpdir(), signal }: { within?: string, signal?: AbortSignal } = {}): Promise<{ cluster: Cluster, addresses: TestClusterAddresses, remove: () => Promise<void> }> {
+/** A cluster in a folder of its own, which is gone with it. Fast, unless a bench wants it to keep its promises to the disk. */
+export async function startTestCluster({ within = tmpdir(), durable = false, signal }: { within?: string, durable?: boolean, signal?: AbortSignal } = {}): Promise<{ cluster: Cluster, addresses: TestClusterAddresses, remove: () => Promise<void> }> {
   const dataFolder = mkdtempSync(join(within, 'undercroft-test-'))
   const forget = () => rmSync(dataFolder, { recursive: true, force: true })
   try {
-    const cluster = await startCluster({ dataFolder, fast: true, signal })
+    const cluster = await startCluster({ dataFolder, fast: !durable, signal })
     const { port, urls } = cluster
     return {
       cluster,

@@ -6,17 +6,15 @@ import { fileURLToPath } from 'node:url'
 import pg from 'pg'
 import { answers, freePort } from '../support/ports'
 import { ratioOf, type Ratio } from './ratio'
+import { CELLAR_SQL } from './sql'
 
 const FLOOR = fileURLToPath(new URL('./floor', import.meta.url))
-
-const SQL = `select "brewery_id", "id", "name", "kind", "working_litres", "wood", "walking_order", "beer_id", "created_at", "version"
-  from "vessels" where "vessels"."brewery_id" = $1 order by "vessels"."walking_order" asc, "vessels"."name" asc`
 
 /** `GET /api/vessels` of a signed-in owner, with session, role, policies and transaction, against a bare handler with the same SQL. */
 export async function benchVessels(server: { origin: string, cookie: string }, superuserUrl: string): Promise<Ratio> {
   const output = mkdtempSync(join(tmpdir(), 'undercroft-bench-'))
   const port = await freePort()
-  const environment = { ...process.env, BENCH_FLOOR_OUTPUT: output, BENCH_DATABASE_URL: superuserUrl, BENCH_SQL: SQL, BENCH_BREWERY: await firstBrewery(superuserUrl), NODE_ENV: 'production', PORT: String(port), HOST: '127.0.0.1' }
+  const environment = { ...process.env, BENCH_FLOOR_OUTPUT: output, BENCH_DATABASE_URL: superuserUrl, BENCH_SQL: JSON.stringify(CELLAR_SQL), BENCH_BREWERY: await firstBrewery(superuserUrl), NODE_ENV: 'production', PORT: String(port), HOST: '127.0.0.1' }
   await run('npx', ['nitropack', 'build', '--dir', FLOOR], environment)
   const floor = spawn(process.execPath, [join(output, 'server/index.mjs')], { env: environment, stdio: 'ignore' })
   try {
