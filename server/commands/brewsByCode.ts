@@ -13,13 +13,20 @@ export interface NamedBrew {
   beerCode?: string
 }
 
-/** The ids of brews by their codes; those that are new are made. A code that names another day is refused. */
-export async function brewsByCode(work: Work, named: readonly NamedBrew[]): Promise<Map<string, string>> {
+/** A brew as far as a line of the ledger has to know it. */
+export interface KnownBrew {
+  id: string
+  code: string
+  brewedOn: string
+}
+
+/** Brews by their codes; those that are new are made. A code that names another day is refused. */
+export async function brewsByCode(work: Work, named: readonly NamedBrew[]): Promise<Map<string, KnownBrew>> {
   if (named.length === 0) return new Map()
   const { tx, brewery } = work
   const beers = await beersByCode(tx, brewery.id)
   const wanted = new Map(named.map(brew => [brew.code, brew]))
-  const ids = new Map<string, string>()
+  const known = new Map<string, KnownBrew>()
   for (const some of inParts([...wanted.values()])) {
     await tx.insert(brews).values(some.map(brew => ({
       breweryId: brewery.id,
@@ -34,10 +41,10 @@ export async function brewsByCode(work: Work, named: readonly NamedBrew[]): Prom
       .where(and(eq(brews.breweryId, brewery.id), inArray(brews.code, some.map(brew => brew.code))))
     for (const row of rows) {
       requireSameDay(row, wanted.get(row.code))
-      ids.set(row.code, row.id)
+      known.set(row.code, row)
     }
   }
-  return ids
+  return known
 }
 
 function requireSameDay(row: { code: string, brewedOn: string }, wanted: NamedBrew | undefined): void {

@@ -3,9 +3,9 @@ import { replay, type Cellar } from '#shared/cellar/replay'
 import { stackOf, type Stack } from '#shared/cellar/stack'
 import { standingOf, type StandingPicture } from '#shared/cellar/standing'
 import { workingLitresOn } from '#shared/cellar/vesselEvent'
-import type { LedgerLine } from '#shared/cellar/movement'
+import { inLedgerOrder, type LedgerLine } from '#shared/cellar/movement'
 import type { Tx } from '#server/database/client'
-import { brewsOldestFirst, linesInLedgerOrder, type BrewRow } from '#server/database/queries/ledger'
+import { brewsOldestFirst, linesInLedgerOrder, type BrewRow, type MovementRow } from '#server/database/queries/ledger'
 import { vesselEventsInOrder, type VesselEventRow } from '#server/database/queries/vesselEvents'
 import { vesselsInWalkingOrder, type VesselRow, type VesselWithBeer } from '#server/database/queries/vessels'
 
@@ -26,6 +26,19 @@ export async function readCellarState(tx: Tx, breweryId: string): Promise<Cellar
     vesselEventsInOrder(tx, breweryId),
   ])
   return { vessels, lines, brews: new Map(brews.map(brew => [brew.id, brew])), events: groupedBy(events, event => event.vesselId) }
+}
+
+/** The state as it is once some movements, and brews that they named, have been added to it. */
+export function withLines(state: CellarState, rows: readonly MovementRow[], brews: readonly { id: string, code: string, brewedOn: string }[]): CellarState {
+  const added = rows.map(({ occurredOn, brewId, toVesselId, lossLitres, ...row }): LedgerLine => ({
+    ...row,
+    day: epochDay(occurredOn),
+    ...(brewId !== null && { brewId }),
+    ...(toVesselId !== null && { toVesselId, lossLitres: lossLitres ?? 0 }),
+  }))
+  const named = brews.filter(brew => !state.brews.has(brew.id))
+    .map(brew => [brew.id, { ...brew, brewedDay: epochDay(brew.brewedOn), ageBandDays: null, beerId: null, beerCode: null, beerName: null, version: 1 }] as const)
+  return { ...state, lines: [...state.lines, ...added].sort(inLedgerOrder), brews: new Map([...state.brews, ...named]) }
 }
 
 /** The cellar at the end of a day, and what to ask of it. */

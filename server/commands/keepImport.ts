@@ -21,7 +21,7 @@ export async function keepImport(work: Work, rows: ImportRows, { dryRun }: { dry
 
   const { tx, brewery, person, now } = work
   const made = await brewsByCode(work, rows.brews)
-  const brewIds = new Map([...(await brewsOldestFirst(tx, brewery.id)).map(brew => [brew.code, brew.id] as const), ...made])
+  const brewIds = new Map([...(await brewsOldestFirst(tx, brewery.id)), ...made.values()].map(brew => [brew.code, brew.id]))
   for (const some of inParts(rows.acts)) {
     await tx.insert(acts).values(some.map(act => ({ ...act, breweryId: brewery.id, recordedAt: now, recordedBy: person.id }))).onConflictDoNothing()
   }

@@ -7,7 +7,7 @@ import { presentAct } from '#server/presenters/ledger'
 import { audit } from './audit'
 import { sameAct } from './actContent'
 import { requireSound } from './actRules'
-import { readCellarState } from './cellarState'
+import { readCellarState, withLines } from './cellarState'
 import { movementRowsOf } from './movementRows'
 import { whatChanged } from './whatChanged'
 import type { Work } from './work'
@@ -18,15 +18,22 @@ import type { Work } from './work'
  * filled in: the ledger keeps what it is told, and what is worked out from it carries the mark.
  */
 export async function recordAct(work: Work, input: ActInput): Promise<{ act: ActRecorded, made: boolean }> {
-  const { tx, brewery } = work
-  if (await actById(tx, brewery.id, input.id)) return replayed(work, input)
-  const before = await readCellarState(tx, brewery.id)
+  const { tx, brewery, person, now } = work
+  const [known, before] = await Promise.all([actById(tx, brewery.id, input.id), readCellarState(tx, brewery.id)])
+  if (known) return replayed(work, input)
   requireSound(input, before, work.today)
+  const act = { breweryId: brewery.id, id: input.id, note: input.note ?? null, recordedAt: now, recordedBy: person.id }
   try {
-    await savepoint(tx, async () => {
-      await tx.insert(acts).values({ breweryId: brewery.id, id: input.id, note: input.note ?? null, recordedAt: work.now, recordedBy: work.person.id })
-      await tx.insert(movements).values(await movementRowsOf(work, input))
+    const { rows, brews } = await savepoint(tx, async () => {
+      await tx.insert(acts).values(act)
+      const made = await movementRowsOf(work, input)
+      await tx.insert(movements).values(made.rows)
+      return made
     })
+    await audit(work, { action: 'act.recorded', subject: { kind: 'act', id: input.id } })
+    const after = withLines(before, rows, brews)
+    const view = presentAct({ act: { ...act, recordedByName: person.name }, movements: rows }, after, [])
+    return { act: { ...view, changed: whatChanged(before, after, work.today) }, made: true }
   }
   catch (error) {
     // Two tablets with one act: the second finds what the first has just kept.
@@ -34,20 +41,11 @@ export async function recordAct(work: Work, input: ActInput): Promise<{ act: Act
     if (breaksUnique(error, 'movements_pkey')) throw new Fault('sameIdOtherContent', 'A movement with one of these ids is kept already, in another act.')
     throw error
   }
-  await audit(work, { action: 'act.recorded', subject: { kind: 'act', id: input.id } })
-  return { act: await describeAct(work, input.id, before), made: true }
 }
 
 async function replayed(work: Work, input: ActInput): Promise<{ act: ActRecorded, made: boolean }> {
   const { tx, brewery } = work
   const known = await actById(tx, brewery.id, input.id)
   if (!known || !await sameAct(work, known, input)) throw new Fault('sameIdOtherContent', 'An act with this id is kept already, and it is another one.')
-  return { act: await describeAct(work, input.id), made: false }
-}
-
-async function describeAct({ tx, brewery, today }: Work, id: string, before?: Awaited<ReturnType<typeof readCellarState>>): Promise<ActRecorded> {
-  const after = await readCellarState(tx, brewery.id)
-  const known = await actById(tx, brewery.id, id)
-  if (!known) throw new Error('an act that was just kept is not there')
-  return { ...presentAct(known, after, []), changed: before ? whatChanged(before, after, today) : [] }
+  return { act: { ...presentAct(known, await readCellarState(tx, brewery.id), []), changed: [] }, made: false }
 }

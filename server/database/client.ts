@@ -6,7 +6,7 @@ import * as schema from './schema'
  * An open transaction, as commands and queries use it. Only the doors in `door.ts` make one. It begins and ends there,
  * so it has no `transaction()` of its own; `savepoint()` is for a step that may fail by itself.
  */
-export type Tx = Omit<NodePgDatabase<typeof schema>, 'transaction'>
+export type Tx = Omit<NodePgDatabase<typeof schema>, 'transaction'> & { readonly $client: pg.PoolClient }
 
 /** The way to PostgreSQL of one process. Nobody but the doors takes a client out of it. */
 export interface Database {

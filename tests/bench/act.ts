@@ -62,20 +62,16 @@ async function pgbench(script: string, url: string): Promise<number> {
 /** The statements of one recorded act, in their order. */
 function scriptFor({ breweryId, vesselId, personId }: Place): string {
   const cellar = CELLAR_SQL.map(text => `${text.replace(/\s+/g, ' ').replaceAll('$1', `'${breweryId}'`)};`)
-  const act = `select acts.*, users.name from acts join users on users.id = acts.recorded_by where acts.brewery_id = '${breweryId}' and acts.id = :'act'::uuid;`
-  const movements = `select * from movements where brewery_id = '${breweryId}' and act_id = :'act'::uuid order by position;`
+  const act = `select acts.*, users.name from acts join users on users.id = acts.recorded_by where acts.brewery_id = '${breweryId}' and acts.id = :act::uuid;`
   return [
-    `\\set a random(1, 2000000000)`, `\\set b random(1, 2000000000)`,
     'begin;',
-    `select lpad(to_hex(:a), 8, '0') || '-0000-4000-8000-0000' || lpad(to_hex(:b), 8, '0') as act \\gset`,
-    `select set_config('undercroft.brewery', '${breweryId}', true), set_config('undercroft.person', '${personId}', true);`,
+    `select gen_random_uuid()::text as act, set_config('undercroft.brewery', '${breweryId}', true), set_config('undercroft.person', '${personId}', true) \\gset`,
     act, ...cellar,
     'savepoint step;',
-    `insert into acts (brewery_id, id, recorded_at, recorded_by) values ('${breweryId}', :'act'::uuid, now(), '${personId}');`,
-    `insert into movements (brewery_id, id, act_id, position, kind, vessel_id, litres, occurred_on, place_in_day) values ('${breweryId}', :'act'::uuid, :'act'::uuid, 0, 'sample', '${vesselId}', 0.001, '2026-09-14', 2);`,
+    `insert into acts (brewery_id, id, recorded_at, recorded_by) values ('${breweryId}', :act::uuid, now(), '${personId}');`,
+    `insert into movements (brewery_id, id, act_id, position, kind, vessel_id, litres, occurred_on, place_in_day) values ('${breweryId}', :act::uuid, :act::uuid, 0, 'sample', '${vesselId}', 0.001, '2026-09-14', 2);`,
     'release savepoint step;',
-    `insert into audit_events (brewery_id, id, at, person_id, action, subject_kind, subject_id) values ('${breweryId}', gen_random_uuid(), now(), '${personId}', 'act.recorded', 'act', :'act'::uuid);`,
-    ...cellar, act, movements,
+    `insert into audit_events (brewery_id, id, at, person_id, action, subject_kind, subject_id) values ('${breweryId}', gen_random_uuid(), now(), '${personId}', 'act.recorded', 'act', :act::uuid);`,
     'commit;',
   ].join('\n')
 }
