@@ -237,6 +237,21 @@ describe('signing in', () => {
   }, 60_000)
 })
 
+describe('behind a proxy of our own', () => {
+  it('people are told apart by the address that the proxy adds, and by no other', async () => {
+    const proxied = await startServer({ env: { UNDERCROFT_TRUSTED_PROXIES: '1' } })
+    try {
+      const guess = (forwarded: string) => visitor(proxied.origin).request('POST', '/api/auth/sign-in', { body: { email: 'owner@sallowmere.example', password: 'quite wrong here' }, headers: { 'x-forwarded-for': forwarded } })
+      for (let n = 0; n < 10; n++) expect((await guess(`198.51.100.${n}, 203.0.113.7`)).status).toBe(401)
+      expect((await guess('198.51.100.99, 203.0.113.7')).status).toBe(429)
+      expect((await guess('203.0.113.7, 203.0.113.8')).status).toBe(401)
+    }
+    finally {
+      await proxied.stop()
+    }
+  })
+})
+
 describe('how much', () => {
   it('a body of 20 MB is refused at once, said beforehand or not', async () => {
     const reply = await owner.request('POST', '/api/vessels', { body: JSON.stringify({ name: 'x'.repeat(20_000_000) }) }).catch(() => ({ status: 413 }))

@@ -120,6 +120,28 @@ describe('over https', () => {
   })
 })
 
+describe('a fault of our own', () => {
+  it('is told to nobody, in the API as on a page, and noted for us without a secret', async () => {
+    const broken = await startServer()
+    try {
+      const who = await signedIn(broken.origin, 'owner@sallowmere.example')
+      await broken.db.asSuperuser('alter table memberships rename to elsewhere')
+      const replies = [await who.get('/api/vessels'), await who.get('/api/me'), await who.get('/cellar', PAGE), await who.get('/vessels/new', PAGE)]
+      for (const reply of replies) {
+        expect(reply.status).toBe(500)
+        expect(reply.text).not.toMatch(/memberships|relation|select |undercroft_app|node_modules|at async|\.ts:|enter_session/)
+      }
+      expect(replies[0]?.json).toMatchObject({ code: 'failed', detail: 'Something went wrong here. It has been noted; try again in a moment.' })
+      await expect.poll(() => broken.printed()).toContain('memberships')
+      expect(broken.printed()).not.toMatch(/sallowmere|Odile|Fe26/)
+      expect(broken.printed()).toContain(replies[0]?.headers.get('x-request-id'))
+    }
+    finally {
+      await broken.stop()
+    }
+  })
+})
+
 describe('with the database away', () => {
   it('the API and the pages say so, without a word of the driver, and come back by themselves', async () => {
     const cut = await startServer()
