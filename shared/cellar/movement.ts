@@ -2,6 +2,13 @@
 export const MOVEMENT_KINDS = ['in', 'draw', 'move', 'loss', 'sample', 'addition'] as const
 export type MovementKind = (typeof MOVEMENT_KINDS)[number]
 
+const KINDS: ReadonlySet<string> = new Set(MOVEMENT_KINDS)
+
+/** Whether a word is one of the kinds. */
+export function isMovementKind(word: string): word is MovementKind {
+  return KINDS.has(word)
+}
+
 /** Why beer was lost. */
 export const LOSS_REASONS = ['evaporation', 'leak', 'lees', 'transfer', 'dumped'] as const
 export type LossReason = (typeof LOSS_REASONS)[number]

@@ -6,10 +6,10 @@ import { bigLedger } from './replay'
 
 const FIRST_DAY = 17_700
 
-/** Sixty vessels with eight years behind them, brought in through the front door. */
+/** Sixty vessels with eight years behind them, drawn from twice a year, brought in through the front door. */
 export async function fillBigCellar(owner: Visitor): Promise<void> {
   for (let vessel = 0; vessel < 60; vessel++) await owner.post('/api/vessels', { id: newId(), name: `vessel ${vessel}`, kind: vessel % 3 ? 'barrel' : 'vat', workingLitres: 1000 })
-  const file = writeLedgerFile(bigLedger(60, 8).map(line => ({
+  const file = writeLedgerFile(bigLedger(60, 8, 2).map(line => ({
     date: civilDateOf(FIRST_DAY + line.day), act: line.kind, vessel: line.vesselId, litres: line.litres,
     target: line.brewId ?? line.toVesselId ?? null, brewed: line.brewId ? civilDateOf(FIRST_DAY + line.day) : null, lossOnWay: line.lossLitres ?? null, reason: line.kind === 'loss' ? 'evaporation' : null,
   })))

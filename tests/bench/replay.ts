@@ -1,14 +1,14 @@
 import { PLACE_IN_DAY, type LedgerLine } from '../../shared/cellar/movement'
 import { replay } from '../../shared/cellar/replay'
 
-/** A brewery's ledger: so many vessels, each drawn and refilled four times a year, with a loss before, and a move to its neighbour each fifth year. */
-export function bigLedger(vessels: number, years: number): LedgerLine[] {
+/** A brewery's ledger: so many vessels, each drawn and refilled so many times a year (four, if not said), with a loss before, and a move to its neighbour each fifth year. */
+export function bigLedger(vessels: number, years: number, drawsAYear = 4): LedgerLine[] {
   const lines: LedgerLine[] = []
   const say = (kind: LedgerLine['kind'], day: number, vessel: number, litres: number, more: Partial<LedgerLine> = {}) =>
     lines.push({ kind, day, placeInDay: PLACE_IN_DAY[kind], actId: `${day}`, position: vessel, vesselId: `vessel ${vessel}`, litres, ...more })
   for (let vessel = 0; vessel < vessels; vessel++) say('in', 0, vessel, 1000, { brewId: `brew 0 ${vessel}` })
-  for (let quarter = 1; quarter <= years * 4; quarter++) {
-    const day = quarter * 91
+  for (let quarter = 1; quarter <= years * drawsAYear; quarter++) {
+    const day = quarter * Math.floor(365 / drawsAYear)
     for (let vessel = 0; vessel < vessels; vessel++) say('loss', day, vessel, 5)
     for (let vessel = 0; vessel < vessels; vessel++) say('draw', day, vessel, 200)
     if (quarter % 20 === 0) for (let vessel = 0; vessel < vessels; vessel += 3) say('move', day, vessel, 50, { toVesselId: `vessel ${(vessel + 1) % vessels}`, lossLitres: 1 })

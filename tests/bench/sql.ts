@@ -3,8 +3,9 @@ export const CELLAR_SQL = [
   `select "vessels"."brewery_id", "vessels"."id", "vessels"."name", "vessels"."kind", "working_litres", "wood", "walking_order", "beer_id", "created_at", "vessels"."version", "beers"."code", "beers"."name"
    from "vessels" left join "beers" on "beers"."brewery_id" = "vessels"."brewery_id" and "beers"."id" = "vessels"."beer_id"
    where "vessels"."brewery_id" = $1 order by "vessels"."walking_order", "vessels"."name"`,
-  `select coalesce(json_agg(json_build_array(m.kind, m.occurred_on - date '1970-01-01', m.place_in_day, m.act_id, m.position, m.vessel_id, m.litres, m.brew_id, m.to_vessel_id, m.loss_litres)
-     order by m.occurred_on, m.place_in_day, m.act_id, m.position), '[]') as lines
+  `select string_agg(m.kind::text || ',' || (m.occurred_on - date '1970-01-01') || ',' || m.place_in_day || ',' || m.act_id || ',' || m.position || ',' || m.vessel_id
+     || ',' || m.litres || ',' || coalesce(m.brew_id::text, '') || ',' || coalesce(m.to_vessel_id::text, '') || ',' || coalesce(m.loss_litres::text, ''),
+     chr(10) order by m.occurred_on, m.place_in_day, m.act_id, m.position) as lines
    from movements m left join reversals r on r.brewery_id = m.brewery_id and r.movement_id = m.id where m.brewery_id = $1 and r.id is null`,
   `select "brews"."id", "brews"."code", "brewed_on", "brewed_on" - date '1970-01-01' as day, "age_band_days", "beer_id", "beers"."code", "beers"."name", "brews"."version"
    from "brews" left join "beers" on "beers"."brewery_id" = "brews"."brewery_id" and "beers"."id" = "brews"."beer_id"
