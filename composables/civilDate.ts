@@ -16,6 +16,22 @@ export function shortDate(day: string): string {
   return `${WEEKDAY.format(noon(day))} ${dayOfMonth} ${month.slice(0, 3)}`
 }
 
+/** `14 September 2026`. */
+export function plainDate(day: string): string {
+  return DAY_MONTH_YEAR.format(noon(day))
+}
+
+/** `16 Feb 2026`, for tables. */
+export function tableDate(day: string): string {
+  const [dayOfMonth, month = '', year = ''] = plainDate(day).split(' ')
+  return `${dayOfMonth} ${month.slice(0, 3)} ${year}`
+}
+
+/** Whole days from one day to another; below nought if the second is the earlier. */
+export function daysFrom(from: string, to: string): number {
+  return Math.round((noon(to).getTime() - noon(from).getTime()) / DAY_MS)
+}
+
 /** The week's number by ISO 8601: the week of a day is the week of its Thursday. */
 export function isoWeek(day: string): number {
   const date = noon(day)

@@ -29,7 +29,7 @@ export function isVesselView(value: unknown): value is VesselView {
     && typeof value.version === 'number' && typeof value.workingLitres === 'number'
 }
 
-function isProblem(value: unknown): value is Problem {
+export function isProblem(value: unknown): value is Problem {
   return isRecord(value) && typeof value.status === 'number' && typeof value.code === 'string'
     && typeof value.detail === 'string' && Array.isArray(value.errors)
 }

@@ -13,6 +13,8 @@ export interface Screen {
 /** The screens that the head of the page names, in its order. A new screen is one more line. */
 export const SCREENS: readonly Screen[] = [
   { word: 'Cellar', path: '/cellar', holds: ['/vessels'], ability: 'readCellar' },
+  { word: 'Brews', path: '/brews', ability: 'readCellar' },
+  { word: 'Ledger', path: '/ledger', ability: 'exportLedger' },
 ]
 
 /** Whether a path belongs to a screen without being its own. */

@@ -8,14 +8,27 @@ export type VesselValues = AsTyped<{ name: string, kind: VesselView['kind'], wor
 
 const KEY = 'vessels'
 
-/** All vessels of the cellar, in walking order. `ready` is there for a page that cannot begin without them. */
-export function useVessels({ lazy = false } = {}) {
+/**
+ * All vessels of the cellar, in walking order, with their layers. `ready` is there for a page that cannot begin without them.
+ *
+ * @param on the day to look back to; null for today
+ */
+export function useVessels({ lazy = false, on = () => null }: { lazy?: boolean, on?: () => string | null } = {}) {
   const api = useApi()
-  const ready = useAsyncData(KEY, (): Promise<VesselView[]> => api<VesselView[]>('/api/vessels').catch(failReading), { lazy })
+  const ready = useAsyncData(
+    () => on() === null ? KEY : `${KEY} on ${on()}`,
+    (): Promise<VesselView[]> => api<VesselView[]>('/api/vessels', { query: { layers: 'true', ...onQuery(on()) } }).catch(failReading),
+    { lazy },
+  )
   const { data: vessels, error, status, refresh } = ready
   /** Why they could not be read, in a sentence. */
   const why = computed(() => error.value?.message)
   return { vessels, why, status, refresh, ready }
+}
+
+/** The day of a question, if it is not today. */
+export function onQuery(on: string | null): { on?: string } {
+  return on === null ? {} : { on }
 }
 
 /** What may be done to a vessel. Each answers with the vessel as it then is. */

@@ -135,3 +135,8 @@ function rectangle(x: number, y: number, width: number, height: number): Rectang
 function rounded(number: number): number {
   return Math.round(number * 10) / 10
 }
+
+/** The size of a vessel in metres. */
+export function vesselSize(kind: VesselKind, workingLitres: number): { widthMetres: number, heightMetres: number } {
+  return vesselForm(kind, workingLitres)
+}

@@ -68,6 +68,16 @@ function moveDays(text: string, shiftDays: number): string {
   return text.replace(/\b\d{4}-\d{2}-\d{2}\b/g, date => addDays(date, shiftDays))
 }
 
+const MONTHS = ['January', 'February', 'March', 'April', 'May', 'June', 'July', 'August', 'September', 'October', 'November', 'December']
+
+/** Days that are told in words, `21 September`, moved with the year of the day on which they were told. */
+export function moveSpokenDays(text: string, toldOn: string, shiftDays: number): string {
+  return text.replace(new RegExp(`\\b(\\d{1,2}) (${MONTHS.join('|')})\\b`, 'g'), (_, day: string, month: string) => {
+    const moved = addDays(`${toldOn.slice(0, 4)}-${String(MONTHS.indexOf(month) + 1).padStart(2, '0')}-${day.padStart(2, '0')}`, shiftDays)
+    return `${Number(moved.slice(8))} ${MONTHS[Number(moved.slice(5, 7)) - 1]}`
+  })
+}
+
 async function loadBrewery(tx: Tx, file: BreweryFile, ledger: string, { now, shiftDays, passwordHash }: { now: Date, shiftDays: number, passwordHash: string }): Promise<void> {
   const owner = file.people.find(person => person.role === 'owner')
   if (!owner) throw new Error(`the demo's ${file.brewery.name} has no owner`)
@@ -91,5 +101,5 @@ async function loadBrewery(tx: Tx, file: BreweryFile, ledger: string, { now, shi
 
   await importLedger(work, moveDays(ledger, shiftDays), { dryRun: false })
   for (const { vessel, on, fromLitres, toLitres } of file.resizes) await recordResize(work, idOf(vessel), addDays(on, shiftDays), fromLitres, toLitres)
-  for (const { vessel, on, kind, reason } of file.vesselEvents) await recordVesselEvent(work, idOf(vessel), { id: newId(), kind, occurredOn: addDays(on, shiftDays), reason })
+  for (const { vessel, on, kind, reason } of file.vesselEvents) await recordVesselEvent(work, idOf(vessel), { id: newId(), kind, occurredOn: addDays(on, shiftDays), reason: moveSpokenDays(reason, on, shiftDays) })
 }

@@ -53,6 +53,13 @@ export const useUndoStore = defineStore('undo', () => {
     start()
   }
 
+  /** Says what became of something that cannot be taken back here. */
+  function tell(words: string): void {
+    clear()
+    outcome.value = words
+    start()
+  }
+
   /** Takes it back, and says how that went. */
   async function take(): Promise<void> {
     const taken = offer.value
@@ -73,5 +80,5 @@ export const useUndoStore = defineStore('undo', () => {
     }
   }
 
-  return { offer, secondsLeft, busy, held, outcome, clear, offerUndo, take }
+  return { offer, secondsLeft, busy, held, outcome, clear, offerUndo, tell, take }
 })

@@ -4,16 +4,20 @@ import type { FieldFault } from '#shared/types/problem'
 import type { CellarState } from './cellarState'
 
 /** Refuse an act with a word at each field that cannot be: what no schema sees, because it depends on the cellar or on another field. */
-export function requireSound(input: ActInput, state: CellarState, today: string): void {
+export function requireSound(input: ActInput, state: CellarState, beerCodes: readonly string[], today: string): void {
   const vessels = new Set(state.vessels.map(vessel => vessel.id))
   const codes = new Map([...state.brews.values()].map(brew => [brew.code, brew.brewedOn]))
+  const beers = new Set(beerCodes)
   const ids = new Set<string>()
   const faults = input.movements.flatMap((movement, at) => {
-    const found = faultsOf(movement, { vessels, codes, state, today })
+    const found = faultsOf(movement, { vessels, codes, beers, state, today })
     if (ids.has(movement.id)) found.push({ field: 'id', message: 'Another movement of this act has this id.' })
     ids.add(movement.id)
     return found.map(({ field, message }) => ({ field: `movements.${at}.${field}`, message }))
   })
+  // There are neither draws nor duties yet that an act could make or do.
+  if (input.drawId) faults.push({ field: 'drawId', message: 'There is no such draw.' })
+  if (input.dutyId) faults.push({ field: 'dutyId', message: 'There is no such duty.' })
   if (faults.length > 0) throw new Fault('invalid', 'Something in this act cannot be.', { errors: faults })
 }
 
@@ -21,6 +25,7 @@ interface Around {
   vessels: ReadonlySet<string>
   /** The brew day of each code, those named earlier in the same act among them. */
   codes: Map<string, string>
+  beers: ReadonlySet<string>
   state: CellarState
   today: string
 }
@@ -42,7 +47,7 @@ function faultsOf(movement: MovementInput, around: Around): FieldFault[] {
   return faults
 }
 
-function brewFault(brew: BrewRef, rackedOn: string, { codes, state }: Around): FieldFault | null {
+function brewFault(brew: BrewRef, rackedOn: string, { codes, beers, state }: Around): FieldFault | null {
   if ('id' in brew) {
     const known = state.brews.get(brew.id)
     if (!known) return { field: 'brew.id', message: 'There is no such brew.' }
@@ -50,6 +55,7 @@ function brewFault(brew: BrewRef, rackedOn: string, { codes, state }: Around): F
   }
   const known = codes.get(brew.code)
   if (known !== undefined && known !== brew.brewedOn) return { field: 'brew.brewedOn', message: `Brew ${brew.code} was brewed on ${known}. One code has one brew day.` }
+  if (brew.beerCode !== undefined && !beers.has(brew.beerCode)) return { field: 'brew.beerCode', message: `No beer here has the code ${brew.beerCode}.` }
   codes.set(brew.code, brew.brewedOn)
   return brew.brewedOn > rackedOn ? { field: 'brew.brewedOn', message: 'It cannot be racked before it was brewed.' } : null
 }

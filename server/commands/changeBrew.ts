@@ -11,7 +11,7 @@ import type { Work } from './work'
 /** Say which beer a brew is of, or how well its day is known. Its code and day are what lines of the ledger stand on, and stay. */
 export async function changeBrew(work: Work, id: string, { version, beerCode, ageBandDays }: BrewChange): Promise<BrewView> {
   const { tx, brewery } = work
-  const [before] = await tx.select().from(brews).where(and(eq(brews.breweryId, brewery.id), eq(brews.id, id))).for('update')
+  const [before] = await tx.select().from(brews).where(and(eq(brews.breweryId, brewery.id), eq(brews.id, id))).for('no key update')
   if (!before) throw new Fault('notFound', 'There is no such brew.')
   if (before.version !== version) throw new Fault('stale', 'Somebody changed this brew first.', { current: await describe(work, id) })
   const beer = beerCode === undefined || beerCode === null ? undefined : (await beersByCode(tx, brewery.id)).find(one => one.code === beerCode)

@@ -1,9 +1,11 @@
-import { and, eq, inArray, sql } from 'drizzle-orm'
+import { and, eq, sql } from 'drizzle-orm'
 import type { LineFault } from '#shared/schemas/ledger'
-import { brewsOldestFirst } from '#server/database/queries/ledger'
+import { anyOf } from '#server/database/anyOf'
+import { beersByCode, brewsOldestFirst } from '#server/database/queries/ledger'
 import { acts, ledgerNotes, movements, reversals } from '#server/database/schema/index'
 import { brewsByCode } from './brewsByCode'
-import type { ImportRows, Placed } from './importRows'
+import { createBeer } from './createBeer'
+import type { ImportRows } from './importRows'
 import { inParts } from './inParts'
 import type { Work } from './work'
 
@@ -13,13 +15,14 @@ import type { Work } from './work'
  */
 export async function keepImport(work: Work, rows: ImportRows, { dryRun }: { dryRun: boolean }): Promise<LineFault[]> {
   const faults = [
-    ...await clashesOf(work, rows.movements, movements, movementContent),
-    ...await clashesOf(work, rows.notes, ledgerNotes, noteContent),
+    ...await movementClashes(work, rows),
+    ...await noteClashes(work, rows.notes),
     ...await reversalFaults(work, rows),
   ]
   if (faults.length > 0 || dryRun) return faults
 
   const { tx, brewery, person, now } = work
+  await nameBeers(work, rows)
   const made = await brewsByCode(work, rows.brews)
   const brewIds = new Map([...(await brewsOldestFirst(tx, brewery.id)), ...made.values()].map(brew => [brew.code, brew.id]))
   for (const some of inParts(rows.acts)) {
@@ -42,22 +45,50 @@ export async function keepImport(work: Work, rows: ImportRows, { dryRun }: { dry
   return []
 }
 
-const movementContent = (row: { vesselId: string, kind: string, litres: number, occurredOn: string, toVesselId: string | null }) =>
-  [row.kind, row.vesselId, row.litres, row.occurredOn, row.toVesselId].join('|')
-const noteContent = (row: { vesselId: string, notedOn: string, text: string }) => [row.vesselId, row.notedOn, row.text].join('|')
+/** A beer that the file names for the first time is made, under its code until somebody gives it a name. */
+async function nameBeers(work: Work, { brews }: ImportRows): Promise<void> {
+  const known = new Set((await beersByCode(work.tx, work.brewery.id)).map(beer => beer.code))
+  const named = new Set(brews.flatMap(brew => brew.beerCode === undefined ? [] : [brew.beerCode]))
+  for (const code of named) if (!known.has(code)) await createBeer(work, { code, name: code, family: 'unknown' })
+}
 
-/** Lines whose id something else bears already. */
-async function clashesOf<Row extends { id: string }>({ tx, brewery }: Work, rows: readonly Placed<Row>[], table: typeof movements | typeof ledgerNotes, contentOf: (row: Row) => string): Promise<LineFault[]> {
+/** Everything that a movement says, as one text: two of one id are the same, or one of them is wrong. */
+const movementContent = (row: Omit<ImportRows['movements'][number], 'line'>) =>
+  JSON.stringify([row.actId, row.position, row.kind, row.vesselId, row.litres, row.occurredOn, row.placeInDay, row.method, row.note, row.brewCode, row.lot, row.toVesselId, row.lossLitres, row.reason])
+const noteContent = (row: { actId: string, vesselId: string, notedOn: string, text: string }) => JSON.stringify([row.actId, row.vesselId, row.notedOn, row.text])
+
+const OTHER = { column: 'id', message: 'Something with this id is kept already, and it says something else.' }
+
+/** Lines whose id another line bears already, and lines that would be added to an act that is kept. */
+async function movementClashes({ tx, brewery }: Work, { movements: rows, acts: named }: ImportRows): Promise<LineFault[]> {
+  const codes = new Map((await brewsOldestFirst(tx, brewery.id)).map(brew => [brew.id, brew.code]))
+  const keptActs = new Set((await tx.select({ id: acts.id }).from(acts).where(and(eq(acts.breweryId, brewery.id), anyOf(acts.id, named.map(act => act.id))))).map(act => act.id))
+  const places = new Map<string, number>()
   const faults: LineFault[] = []
   for (const some of inParts(rows)) {
-    const kept = await tx.select().from(table).where(and(eq(table.breweryId, brewery.id), inArray(table.id, some.map(row => row.id))))
-    const byId = new Map(kept.map(row => [row.id, row]))
+    const kept = await tx.select().from(movements).where(and(eq(movements.breweryId, brewery.id), anyOf(movements.id, some.map(row => row.id))))
+    const byId = new Map(kept.map(({ brewId, ...row }) => [row.id, { ...row, brewCode: brewId === null ? null : codes.get(brewId) ?? null }]))
     for (const row of some) {
       const other = byId.get(row.id)
-      if (other && contentOf({ ...row, ...other }) !== contentOf(row)) faults.push({ line: row.line, column: 'id', message: 'Something with this id is kept already, and it says something else.' })
+      if (other && movementContent(other) !== movementContent(row)) faults.push({ line: row.line, ...OTHER })
+      if (!other && keptActs.has(row.actId)) faults.push({ line: row.line, column: 'actId', message: 'This act is kept already: no line can be added to it.' })
+      const place = `${row.actId} ${row.position}`
+      const first = places.get(place)
+      if (first !== undefined) faults.push({ line: row.line, column: 'position', message: `Line ${first} has this place in the act.` })
+      places.set(place, row.line)
     }
   }
   return faults
+}
+
+/** Notes whose id another note bears already. */
+async function noteClashes({ tx, brewery }: Work, rows: ImportRows['notes']): Promise<LineFault[]> {
+  if (rows.length === 0) return []
+  const kept = new Map((await tx.select().from(ledgerNotes).where(and(eq(ledgerNotes.breweryId, brewery.id), anyOf(ledgerNotes.id, rows.map(row => row.id))))).map(row => [row.id, row]))
+  return rows.flatMap((row) => {
+    const other = kept.get(row.id)
+    return other && noteContent(other) !== noteContent(row) ? [{ line: row.line, ...OTHER }] : []
+  })
 }
 
 /** Reversals of lines that are neither kept nor in the file, and of lines that are struck out already. */
@@ -65,13 +96,15 @@ async function reversalFaults({ tx, brewery }: Work, rows: ImportRows): Promise<
   if (rows.reversals.length === 0) return []
   const inFile = new Set(rows.movements.map(row => row.id))
   const wanted = rows.reversals.map(row => row.movementId)
-  const kept = new Set((await tx.select({ id: movements.id }).from(movements).where(and(eq(movements.breweryId, brewery.id), inArray(movements.id, wanted)))).map(row => row.id))
-  const struck = new Map((await tx.select().from(reversals).where(and(eq(reversals.breweryId, brewery.id), inArray(reversals.movementId, wanted)))).map(row => [row.movementId, row.id]))
+  const kept = new Set((await tx.select({ id: movements.id }).from(movements).where(and(eq(movements.breweryId, brewery.id), anyOf(movements.id, wanted)))).map(row => row.id))
+  const struck = new Map((await tx.select().from(reversals).where(and(eq(reversals.breweryId, brewery.id), anyOf(reversals.movementId, wanted)))).map(row => [row.movementId, row.id]))
+  const taken = new Map((await tx.select().from(reversals).where(and(eq(reversals.breweryId, brewery.id), anyOf(reversals.id, rows.reversals.map(row => row.id))))).map(row => [row.id, row.movementId]))
   const first = new Map<string, number>()
   return rows.reversals.flatMap((row): LineFault[] => {
     const earlier = first.get(row.movementId)
     first.set(row.movementId, row.line)
     if (!inFile.has(row.movementId) && !kept.has(row.movementId)) return [{ line: row.line, column: 'reverses', message: 'There is no line with this id.' }]
+    if (taken.has(row.id) && taken.get(row.id) !== row.movementId) return [{ line: row.line, ...OTHER }]
     const by = struck.get(row.movementId)
     if (earlier !== undefined || (by !== undefined && by !== row.id)) return [{ line: row.line, column: 'reverses', message: 'That line is struck out already.' }]
     return []

@@ -1,7 +1,7 @@
-import type { ActInput, ActRecorded } from '#shared/schemas/ledger'
+import type { ActInput, ActRecorded, MovementInput } from '#shared/schemas/ledger'
 import { Fault } from '#shared/types/fault'
 import { breaksUnique, savepoint } from '#server/database/door'
-import { actById } from '#server/database/queries/ledger'
+import { actById, beersByCode } from '#server/database/queries/ledger'
 import { acts, movements } from '#server/database/schema/index'
 import { presentAct } from '#server/presenters/ledger'
 import { audit } from './audit'
@@ -21,7 +21,9 @@ export async function recordAct(work: Work, input: ActInput): Promise<{ act: Act
   const { tx, brewery, person, now } = work
   const [known, before] = await Promise.all([actById(tx, brewery.id, input.id), readCellarState(tx, brewery.id)])
   if (known) return replayed(work, input)
-  requireSound(input, before, work.today)
+  // Asked for only by an act that names a beer, which few do.
+  const beers = input.movements.some(namesBeer) ? await beersByCode(tx, brewery.id) : []
+  requireSound(input, before, beers.map(beer => beer.code), work.today)
   const act = { breweryId: brewery.id, id: input.id, note: input.note ?? null, recordedAt: now, recordedBy: person.id }
   try {
     const { rows, brews } = await savepoint(tx, async () => {
@@ -41,6 +43,10 @@ export async function recordAct(work: Work, input: ActInput): Promise<{ act: Act
     if (breaksUnique(error, 'movements_pkey')) throw new Fault('sameIdOtherContent', 'A movement with one of these ids is kept already, in another act.')
     throw error
   }
+}
+
+function namesBeer(movement: MovementInput): boolean {
+  return movement.kind === 'in' && 'beerCode' in movement.brew && movement.brew.beerCode !== undefined
 }
 
 async function replayed(work: Work, input: ActInput): Promise<{ act: ActRecorded, made: boolean }> {

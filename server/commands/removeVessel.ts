@@ -19,7 +19,7 @@ export async function removeVessel(work: Work, id: string, version: number): Pro
     await tx.delete(vessels).where(and(eq(vessels.breweryId, brewery.id), eq(vessels.id, id)))
   }
   catch (error) {
-    if (databaseCode(error) === FOREIGN_KEY_VIOLATION) throw new Fault('inUse', 'This vessel has held beer. It can be retired, not taken away.')
+    if (databaseCode(error) === FOREIGN_KEY_VIOLATION) throw new Fault('inUse', 'This vessel has something on record: beer that it held, or what befell it. It can be retired, not taken away.')
     throw error
   }
   await audit(work, { action: 'vessel.removed', subject: { kind: 'vessel', id }, detail: { name: before.name } })

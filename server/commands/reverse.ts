@@ -1,12 +1,12 @@
-import { and, eq, inArray } from 'drizzle-orm'
 import { v7 as newId } from 'uuid'
 import type { ActReversed, MovementReversed, ReverseInput } from '#shared/schemas/ledger'
 import { Fault } from '#shared/types/fault'
-import { actById, movementById, reversalsOf } from '#server/database/queries/ledger'
+import { actById, movementById, reversalsByRequest, reversalsOf, type ReversalWithName } from '#server/database/queries/ledger'
 import { reversals } from '#server/database/schema/index'
 import { presentReversal } from '#server/presenters/ledger'
 import { audit } from './audit'
 import { readCellarState } from './cellarState'
+import { inParts } from './inParts'
 import { whatChanged } from './whatChanged'
 import type { Work } from './work'
 
@@ -32,23 +32,42 @@ export async function reverseAct(work: Work, actId: string, input: ReverseInput)
 
 async function strikeOut(work: Work, movementIds: string[], input: ReverseInput): Promise<{ struck: ActReversed, made: boolean }> {
   const { tx, brewery, person, now, today } = work
+  const known = await sameRequest(work, movementIds, input)
+  if (known) return { struck: { reversals: known.map(presentReversal), changed: [] }, made: false }
   const before = await readCellarState(tx, brewery.id)
-  const already = new Set((await reversalsOf(tx, brewery.id, movementIds)).map(reversal => reversal.movementId))
-  const open = movementIds.filter(id => !already.has(id))
-  const [first] = open
-  // The sender's id is the reversal's own where one line is struck out, and the first's where an act is.
-  const rows = open.length === 0
-    ? []
-    : await tx.insert(reversals).values(open.map(movementId => ({
-        breweryId: brewery.id, id: movementId === first ? input.id : newId(), movementId, requestId: input.id, reason: input.reason, reversedAt: now, reversedBy: person.id,
-      }))).onConflictDoNothing().returning({ id: reversals.id })
-  const ofRequest = await tx.select({ id: reversals.id, movementId: reversals.movementId, reason: reversals.reason }).from(reversals)
-    .where(and(eq(reversals.breweryId, brewery.id), eq(reversals.requestId, input.id), inArray(reversals.movementId, movementIds)))
-  if (ofRequest.length === 0 || ofRequest.some(row => row.reason !== input.reason)) {
-    if (rows.length === 0 && already.size > 0) throw new Fault('alreadyDone', 'This is struck out already.')
-    throw new Fault('sameIdOtherContent', 'Something with this id is kept already, and it is another.')
+  const struck = new Set((await reversalsOf(tx, brewery.id, movementIds)).map(reversal => reversal.movementId))
+  const open = movementIds.filter(id => !struck.has(id))
+  if (open.length === 0) throw alreadyStruck()
+  let made = 0
+  for (const some of inParts(open)) {
+    // The sender's id is the reversal's own where one line is struck out, and the first's where an act is.
+    const rows = await tx.insert(reversals).values(some.map(movementId => ({
+      breweryId: brewery.id, id: movementId === open[0] ? input.id : newId(), movementId, requestId: input.id, reason: input.reason, reversedAt: now, reversedBy: person.id,
+    }))).onConflictDoNothing().returning({ id: reversals.id })
+    made += rows.length
   }
-  const struck = (await reversalsOf(tx, brewery.id, ofRequest.map(row => row.movementId))).map(presentReversal)
+  if (made < open.length) {
+    // Somebody was quicker, with this very request or with another. In the second case nothing of ours is kept.
+    const theirs = made === 0 ? await sameRequest(work, movementIds, input) : null
+    if (theirs) return { struck: { reversals: theirs.map(presentReversal), changed: [] }, made: false }
+    throw alreadyStruck()
+  }
   const after = await readCellarState(tx, brewery.id)
-  return { struck: { reversals: struck, changed: whatChanged(before, after, today) }, made: rows.length > 0 }
+  const views = (await reversalsByRequest(tx, brewery.id, input.id)).map(presentReversal)
+  return { struck: { reversals: views, changed: whatChanged(before, after, today) }, made: true }
+}
+
+/** What this request struck out before, if it was sent before; refused if something else was done under its id. */
+async function sameRequest({ tx, brewery }: Work, movementIds: string[], { id, reason }: ReverseInput): Promise<ReversalWithName[] | null> {
+  const earlier = await reversalsByRequest(tx, brewery.id, id)
+  if (earlier.length === 0) return null
+  const asked = new Set(movementIds)
+  const struck = await reversalsOf(tx, brewery.id, movementIds)
+  const same = struck.length === movementIds.length && earlier.every(reversal => reversal.reason === reason && asked.has(reversal.movementId))
+  if (!same) throw new Fault('sameIdOtherContent', 'Something with this id is kept already, and it is another.')
+  return earlier
+}
+
+function alreadyStruck(): Fault {
+  return new Fault('alreadyDone', 'This is struck out already.')
 }

@@ -10,6 +10,9 @@ import { decoyHash, hashPassword, inTurn, needsNewHash, verifyPassword } from '#
 import { recordAttempt, requireFewFailures, type Attempt } from './attempts'
 import { openSession } from './session'
 
+// Nobody has an address with other signs than these, and some of them no database takes.
+const ADDRESS_SIGNS = /^[\x21-\x7E]+$/
+
 /** Where a sign-in comes from. */
 export interface Caller {
   /** A keyed hash of the network address. */
@@ -34,7 +37,7 @@ export async function signIn(database: Database, input: SignIn, caller: Caller):
     // Asked again when it is this one's turn: a burst that passed the first look together is stopped here.
     const user = await withoutBrewery(database, async (tx) => {
       await requireFewFailures(tx, attempt, now)
-      return userByEmail(tx, input.email.toLowerCase())
+      return ADDRESS_SIGNS.test(input.email) ? userByEmail(tx, input.email.toLowerCase()) : undefined
     })
     const right = await verifyPassword(user?.passwordHash ?? await decoyHash(), input.password)
     if (!user || !right) {

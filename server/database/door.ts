@@ -34,11 +34,6 @@ export function withoutBrewery<T>(database: Database, run: (tx: Tx) => Promise<T
   return transaction(database, () => null, run)
 }
 
-/** The same, with the person's own memberships in view. */
-export function withPerson<T>(database: Database, personId: string, run: (tx: Tx) => Promise<T>): Promise<T> {
-  return transaction(database, client => client.query(OPEN, ['', personId]), run)
-}
-
 /** Bring a person's own memberships into view of an open transaction. */
 export async function openPerson(tx: Tx, personId: string): Promise<void> {
   await tx.execute(sql`select set_config('undercroft.person', ${personId}, true)`)
@@ -128,10 +123,14 @@ async function connect(database: Database): Promise<pg.PoolClient> {
   }
 }
 
+// Connections, resources, interventions (a statement that took too long among them), rollbacks and locks of PostgreSQL, and what a socket says.
+const PASSING = /^(08|53|57|40|55P03)|^(ECONNREFUSED|ECONNRESET|EPIPE|ETIMEDOUT|ENOTFOUND)$/
+const PROTOCOL_VIOLATION = '08P01'
+
 /** Whether an error says that the server is away, shutting down or overloaded, rather than that something is wrong with the statement. */
 function unavailable(error: unknown): boolean {
   const code = databaseCode(error)
-  if (code !== undefined) return /^(08|53|57P)/.test(code) || ['ECONNREFUSED', 'ECONNRESET', 'EPIPE', 'ETIMEDOUT', 'ENOTFOUND'].includes(code)
+  if (code !== undefined) return PASSING.test(code) && code !== PROTOCOL_VIOLATION
   // What the driver says of a connection that broke bears no code.
   if (!(error instanceof Error)) return false
   return /^Connection terminated|connection error/.test(error.message) || unavailable(error.cause)

@@ -1,4 +1,5 @@
-import { CivilDate } from '#shared/schemas/fields'
+import { WORKING_LITRES_MAX } from '#shared/cellar/vessel'
+import { CivilDate, thousandths } from '#shared/schemas/fields'
 
 /** A cell that cannot be taken, in words. */
 export class CellFault extends Error {}
@@ -62,8 +63,7 @@ export function idOf(text: string): string {
 }
 
 function fine(litres: number): number {
-  if (litres > 999_999_999.999) throw new CellFault('So much fits into no cellar.')
-  const thousandths = Math.round(litres * 1000)
-  if (Math.abs(litres * 1000 - thousandths) > 1e-4) throw new CellFault('Litres have three decimals at most.')
-  return thousandths / 1000
+  if (litres > WORKING_LITRES_MAX) throw new CellFault('So much fits into no cellar.')
+  if (litres !== thousandths(litres)) throw new CellFault('Litres have three decimals at most.')
+  return litres
 }

@@ -45,7 +45,7 @@ export function presentVessel({ vessel, stack, standing, overBrim }: VesselPictu
   }
 }
 
-/** The layers of a stack for a drawing of it, oldest first. */
+/** The layers of a stack for a drawing of it, oldest first. To a millionth: no drawing shows less, and a cellar has a thousand of them. */
 export function presentLayers(stack: Stack, brews: ReadonlyMap<string, BrewRow>): NonNullable<VesselView['layers']> {
-  return stack.cohorts.map(({ brew, share }) => ({ brewCode: brew.code, brewedOn: civilDateOf(brew.brewedDay), beerCode: brews.get(brew.id)?.beerCode ?? null, share }))
+  return stack.cohorts.map(({ brew, share }) => ({ brewCode: brew.code, brewedOn: civilDateOf(brew.brewedDay), beerCode: brews.get(brew.id)?.beerCode ?? null, share: Math.round(share * 1e6) / 1e6 }))
 }

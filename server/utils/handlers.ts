@@ -1,6 +1,6 @@
 import { getQuery, getRouterParams, setResponseStatus, defineEventHandler, type EventHandler, type H3Event } from 'h3'
 import type { z } from 'zod'
-import { can } from '#shared/abilities'
+import { can, type Ability } from '#shared/abilities'
 import { civilDateIn } from '#shared/cellar/civilDate'
 import type { RouteInput, RouteShape } from '#shared/schemas/route'
 import { Fault } from '#shared/types/fault'
@@ -69,26 +69,36 @@ export function definePersonHandler<R extends RouteShape, T>(route: R, handle: (
  * A route of a brewery. The session is looked up and the role asked in the very transaction that does the work, so a
  * role taken away a second ago counts; what was sent is read through the schema only after that.
  */
-export function defineBreweryHandler<R extends RouteShape & { access: { ability: Parameters<typeof can>[1] } }, T>(route: R, handle: (call: BreweryCall<R>) => Promise<T>): EventHandler {
+export function defineBreweryHandler<R extends RouteShape & { access: { ability: Ability } }, T>(route: R, handle: (call: BreweryCall<R>) => Promise<T>): EventHandler {
   return defineEventHandler(async (event) => {
     const sessionHash = await requireSessionHash(event)
-    const body = await bodyOf(route, event)
     const now = useClock().now()
+    // A file is not even waited for from somebody who may not send one.
+    if (route.text && await withSession(useDatabase(), sessionHash, now, (entered, tx) => refusal(requireMember(entered, tx, now), route))) throw forbidden()
+    const body = await bodyOf(route, event)
     const result = await withSession(useDatabase(), sessionHash, now, async (entered, tx) => {
       const work = requireMember(entered, tx, now)
-      if (!can(work.role, route.access.ability)) {
-        await audit(work, { action: 'refused', detail: { route: `${route.method} ${route.path}`, role: work.role } })
-        return REFUSED
-      }
+      if (await refusal(work, route)) return REFUSED
       return handle({ ...inputOf(route, event, body), event, work })
     })
     // Thrown only now, so that the line in the trail is kept.
-    if (result === REFUSED) throw new Fault('forbidden', 'Your role does not allow this here.')
+    if (result === REFUSED) throw forbidden()
     return reply(event, result)
   })
 }
 
 const REFUSED = Symbol('refused')
+
+/** Whether the role does not allow a route; then it is written into the trail. */
+async function refusal(work: Work, route: RouteShape & { access: { ability: Ability } }): Promise<boolean> {
+  if (can(work.role, route.access.ability)) return false
+  await audit(work, { action: 'refused', detail: { route: `${route.method} ${route.path}`, role: work.role } })
+  return true
+}
+
+function forbidden(): Fault {
+  return new Fault('forbidden', 'Your role does not allow this here.')
+}
 
 async function requireSessionHash(event: H3Event): Promise<string> {
   const hash = await sessionHashOf(event)

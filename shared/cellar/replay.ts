@@ -121,13 +121,13 @@ function move(cellar: Cellar, from: Contents, line: LedgerLine, wooden: Readonly
   const toId = line.toVesselId ?? ''
   let to = vessels.get(toId)
   if (to === undefined) vessels.set(toId, to = emptyContents())
-  if (to.litres > 0) to.lastRefillDay = line.day
   const parcels = from.parcels.slice()
   const amounts = from.amounts.slice()
   const { scale } = from
   const { taken, share } = takeOut(from, line.litres)
   const arriving = Math.max(0, taken - (line.lossLitres ?? 0))
   if (arriving === 0) return
+  if (to.litres > 0) to.lastRefillDay = line.day
   const factor = scale * share * (arriving / taken) / to.scale
   const intoWood = wooden.has(toId)
 

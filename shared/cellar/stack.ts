@@ -41,7 +41,7 @@ export function stackOf(cellar: Cellar, vesselId: string, onDay: number, brewOf:
   })
   const cohorts = [...byBrew].map(([id, litres]) => {
     const brew = brewOf(id)
-    return { brew, litres, share: litres / contents.litres, ageDays: onDay - brew.brewedDay }
+    return { brew, litres, share: Math.min(1, litres / contents.litres), ageDays: onDay - brew.brewedDay }
   })
   cohorts.sort((a, b) => a.brew.brewedDay - b.brew.brewedDay || (a.brew.code < b.brew.code ? -1 : 1))
   return { litres: contents.litres, cohorts, volumeDoubt: contents.volumeDoubt }

@@ -24,14 +24,29 @@ export const Version = z.int().min(1)
 
 /** A day of the brewery's calendar, `2026-09-14`. */
 export const CivilDate = z.iso.date({ error: 'Write a day that exists, as 2026-09-14.' })
+  .refine(date => date >= '1900-01-01', { error: 'No brewery here is that old: write a day since 1900.' })
 
 /** An instant, `2026-09-14T06:30:00.000Z`. */
 export const Instant = z.iso.datetime()
 
 /** Litres of a vessel or a movement: above nought, three decimals at most. */
 export function litres(max: number) {
-  return z.number().positive({ error: 'Write litres above nought.' }).max(max)
-    .refine(value => Math.abs(value * 1000 - Math.round(value * 1000)) < 1e-4, { error: 'Litres have three decimals at most.' })
+  return millilitres(z.number().positive({ error: 'Write litres above nought.' }).max(max))
+}
+
+/** Litres that may be none at all. */
+export function litresOrNone(max: number) {
+  return millilitres(z.number().min(0, { error: 'Write litres of nought or more.' }).max(max))
+}
+
+// The database keeps thousandths: what is not one of them would come back as another number than was sent.
+function millilitres(litres: z.ZodNumber) {
+  return litres.refine(value => value === thousandths(value), { error: 'Litres have three decimals at most.' })
+}
+
+/** The nearest number of three decimals. */
+export function thousandths(value: number): number {
+  return Math.round(value * 1000) / 1000
 }
 
 const IANA_NAME = /^[A-Za-z][A-Za-z0-9_+-]*(\/[A-Za-z0-9_+-]+){0,2}$/

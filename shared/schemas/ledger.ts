@@ -1,7 +1,7 @@
 import { z } from 'zod'
 import { LOSS_REASONS, METHOD_NAMES, MOVEMENT_KINDS } from '../cellar/movement'
 import { WORKING_LITRES_MAX } from '../cellar/vessel'
-import { CivilDate, Id, Instant, line, lines, litres } from './fields'
+import { CivilDate, Id, Instant, line, lines, litres, litresOrNone } from './fields'
 
 export const BREW_CODE_MAX = 40
 export const LOT_MAX = 60
@@ -38,7 +38,7 @@ const common = {
 export const MovementInput = z.discriminatedUnion('kind', [
   z.strictObject({ ...common, kind: z.literal('in'), brew: BrewRef }),
   z.strictObject({ ...common, kind: z.literal('draw'), lot: line(LOT_MAX).optional() }),
-  z.strictObject({ ...common, kind: z.literal('move'), toVesselId: Id, lossLitres: z.number().min(0).max(WORKING_LITRES_MAX).optional() }),
+  z.strictObject({ ...common, kind: z.literal('move'), toVesselId: Id, lossLitres: litresOrNone(WORKING_LITRES_MAX).optional() }),
   z.strictObject({ ...common, kind: z.literal('loss'), reason: z.enum(LOSS_REASONS) }),
   z.strictObject({ ...common, kind: z.literal('sample') }),
   z.strictObject({ ...common, kind: z.literal('addition') }),
@@ -50,6 +50,10 @@ export const MOVEMENTS_OF_AN_ACT_MAX = 200
 export const ActInput = z.strictObject({
   id: Id,
   note: lines(NOTE_MAX).optional(),
+  /** The planned draw that this act makes; null for an extra one. */
+  drawId: Id.nullable().optional(),
+  /** The duty that this act does. */
+  dutyId: Id.optional(),
   movements: z.array(MovementInput).min(1, { error: 'An act has at least one movement.' }).max(MOVEMENTS_OF_AN_ACT_MAX),
 })
 export type ActInput = z.output<typeof ActInput>
@@ -128,6 +132,9 @@ export const ImportReport = z.object({
   reversals: z.int(),
   /** Whether it was kept. */
   kept: z.boolean(),
+  /** The first thousand of what is wrong, by line. */
   errors: z.array(LineFault),
+  /** How many more there are. */
+  moreErrors: z.int(),
 })
 export type ImportReport = z.output<typeof ImportReport>

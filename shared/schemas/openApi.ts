@@ -41,9 +41,11 @@ function operationOf(route: RouteShape): Json {
     security: signedIn ? [{ session: [] }] : [],
     parameters: [...parametersOf(route.params, 'path'), ...parametersOf(route.query, 'query')],
     ...(route.body && { requestBody: { required: !route.body.safeParse(undefined).success, content: { 'application/json': { schema: jsonSchema(route.body, 'input') } } } }),
+    ...(route.text && { requestBody: { required: true, content: { [route.text]: { schema: { type: 'string' } } } } }),
     responses: {
-      ...Object.fromEntries(Object.entries(route.answers).map(([status, { describes, schema }]) => [status, {
+      ...Object.fromEntries(Object.entries(route.answers).map(([status, { describes, schema, type }]) => [status, {
         description: describes,
+        ...(type && { content: { [type]: { schema: { type: 'string' } } } }),
         ...(schema && { content: { 'application/json': { schema: jsonSchema(schema, 'output') } } }),
       }])),
       default: { description: 'It was not done, and why.', content: { 'application/problem+json': { schema: { $ref: '#/components/schemas/Problem' } } } },

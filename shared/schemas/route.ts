@@ -7,6 +7,8 @@ export type Access = 'public' | 'signedIn' | { ability: Ability }
 export interface Answer {
   describes: string
   schema?: z.ZodType
+  /** The media type of an answer that is no JSON. */
+  type?: 'text/csv'
 }
 
 /** All that is fixed about one route: the handler enforces it, the OpenAPI document tells it, the tests go through it. */

@@ -108,7 +108,7 @@ export const ROUTES = {
   }),
   exportLedger: route({
     method: 'GET', path: '/api/ledger.csv', summary: 'The whole ledger as CSV', access: { ability: 'exportLedger' },
-    answers: { 200: { describes: 'The ledger, with its notes and reversals.' } },
+    answers: { 200: { describes: 'The ledger, with its notes and reversals.', type: 'text/csv' } },
   }),
   listBrews: route({
     method: 'GET', path: '/api/brews', summary: 'All brews, newest first, and where each still is', access: { ability: 'readCellar' },

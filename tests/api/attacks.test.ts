@@ -61,6 +61,7 @@ describe('what is sent', () => {
     ['a name that is taken', { name: 'hErOn' }, 'name'],
     ['a place that is none', { walkingOrder: 1.5 }, 'walkingOrder'],
     ['four decimals', { workingLitres: 1.0001 }, 'workingLitres'],
+    ['less than a thousandth', { workingLitres: 1e-8 }, 'workingLitres'],
   ])('%s: a word at the field, nothing kept', async (_, more, field) => {
     const before = await nowhere()
     const reply = await create(more)
@@ -211,7 +212,7 @@ describe('the cookie', () => {
 
 describe('signing in', () => {
   it('answers a wrong password and an unknown address with the same words', async () => {
-    const replies = await Promise.all(['owner@sallowmere.example', 'nobody@sallowmere.example', 'not an address', '\' or 1=1 --'].map(email => visitor(server.origin).post('/api/auth/sign-in', { email, password: 'quite wrong here' })))
+    const replies = await Promise.all(['owner@sallowmere.example', 'nobody@sallowmere.example', 'not an address', '\' or 1=1 --', 'a\u0000b@x.example', 'a\uD800@x.example'].map(email => visitor(server.origin).post('/api/auth/sign-in', { email, password: 'quite wrong here' })))
     for (const reply of replies) expect([reply.status, reply.text]).toEqual([401, replies[0]?.text])
   })
 

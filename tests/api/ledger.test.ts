@@ -131,7 +131,9 @@ describe('an act', () => {
     ['nought litres', { litres: 0 }, 'litres'],
     ['litres as a text', { litres: '3,41' }, 'litres'],
     ['litres beyond any cellar', { litres: 1e30 }, 'litres'],
-    ['four decimals', { litres: 0.0001 }, 'litres'],
+    ['four decimals', { litres: 1.0001 }, 'litres'],
+    ['less than a thousandth', { litres: 1e-8 }, 'litres'],
+    ['nearly a thousandth', { litres: 1.00000001 }, 'litres'],
     ['31 February', { occurredOn: '2026-02-31' }, 'occurredOn'],
     ['tomorrow', { occurredOn: '2026-09-15' }, 'occurredOn'],
     ['1969', { occurredOn: '1969-12-31' }, 'occurredOn'],
@@ -144,6 +146,18 @@ describe('an act', () => {
     expect(reply.status).toBe(422)
     expect(fields(reply).map(error => error.field)).toEqual([`movements.1.${field}`])
     expect((await stackOf(id)).litres).toBe(100)
+  })
+
+  it.each([['0000-01-01'], ['0050-01-01'], ['1899-12-31']])('a brew day of %s is refused', async (brewedOn) => {
+    const reply = await hand.post('/api/acts', { id: newId(), movements: [{ ...fill(idOf('Heron'), 1, brewedOn, '2026-09-07') }] })
+    expect(reply.status).toBe(422)
+  })
+
+  it('may say that it makes no planned draw; a draw, a duty or a beer that is none is told at its field', async () => {
+    const id = await aVessel()
+    expect((await hand.post('/api/acts', { id: newId(), drawId: null, movements: [draw(id, 1)] })).status).toBe(201)
+    const reply = await hand.post('/api/acts', { id: newId(), drawId: newId(), dutyId: newId(), movements: [{ ...fill(id, 1, '2026-08-03', '2026-09-07'), brew: { code: `X${id}`.slice(0, 40), brewedOn: '2026-08-03', beerCode: 'NOPE' } }] })
+    expect(fields(reply).map(error => error.field)).toEqual(['movements.0.brew.beerCode', 'drawId', 'dutyId'])
   })
 
   it('cannot move beer into itself, lose more than moves, rack before brewing, or give a code two days', async () => {
@@ -200,6 +214,21 @@ describe('a reversal', () => {
     expect(reply.json).toMatchObject({ reversals: [{ movementId: act.movements[1]?.id }] })
     expect((await stackOf(id)).litres).toBe(1000)
     expect((await owner.post(`/api/acts/${act.id}/reverse`, { id: newId(), reason: 'once more' })).status).toBe(409)
+  })
+
+  it('under an id that struck out something else is refused, and strikes out nothing', async () => {
+    const id = await aVessel()
+    const [one, other] = [draw(id, 10), { id: newId(), movements: [draw(id, 20), draw(id, 30)] }]
+    await hand.post('/api/acts', { id: newId(), movements: [one] })
+    await hand.post('/api/acts', other)
+    const request = { id: newId(), reason: 'typed wrong' }
+    expect((await owner.post(`/api/movements/${one.id}/reverse`, request)).status).toBe(201)
+    expect((await owner.post(`/api/acts/${other.id}/reverse`, request)).status).toBe(409)
+    expect((await stackOf(id)).litres).toBe(950)
+    const line = { id: newId(), reason: 'one line of two' }
+    expect((await owner.post(`/api/movements/${other.movements[0]?.id}/reverse`, line)).status).toBe(201)
+    expect((await owner.post(`/api/acts/${other.id}/reverse`, line)).status).toBe(409)
+    expect((await stackOf(id)).litres).toBe(970)
   })
 
   it('of fifty at once one is made', async () => {
@@ -326,6 +355,22 @@ describe('a ledger file', () => {
     expect(report(await send(owner, file, '?dryRun=1')).errors[0]).toMatchObject({ line, column })
   })
 
+  it('adds no line to an act that is kept, gives no place twice, and keeps no id with another meaning', async () => {
+    const id = await aVessel()
+    const name = read<VesselView>(await owner.get(`/api/vessels/${id}`)).name
+    const act = { id: newId(), movements: [draw(id, 1)] }
+    await hand.post('/api/acts', act)
+    const into = (kind: string, more: string) => send(owner, `date;kind;vessel;litres;act;position;id;reason\n2026-09-07;${kind};${name};1;${more}`, '?dryRun')
+    expect(report(await into('draw', `${act.id};7;;`)).errors).toMatchObject([{ line: 2, column: 'actId' }])
+    const fresh = newId()
+    expect(report(await into('draw', `${fresh};0;;\n2026-09-07;draw;${name};1;${fresh};0;;`)).errors).toMatchObject([{ line: 3, column: 'position' }])
+    const lost = { id: newId(), kind: 'loss', vesselId: id, litres: 1, occurredOn: '2026-09-07', reason: 'leak' }
+    const losing = { id: newId(), movements: [lost] }
+    await hand.post('/api/acts', losing)
+    expect(report(await into('loss', `${losing.id};0;${lost.id};dumped`)).errors).toMatchObject([{ line: 2, column: 'id' }])
+    expect(report(await into('loss', `${losing.id};0;${lost.id};leak`)).errors).toEqual([])
+  })
+
   it('a dry run keeps nothing', async () => {
     const before = (await owner.get('/api/ledger.csv')).text
     expect(report(await send(owner, 'date;act;vessel;litres\n2026-03-02;draw;Heron;1\n', '?dryRun=true'))).toMatchObject({ kept: false, movements: 1, errors: [] })
@@ -342,6 +387,10 @@ describe('a ledger file', () => {
     expect(told.length).toBeGreaterThan(100)
     expect(told[0]).toEqual({ line: 501 })
     expect((await stackOf(id)).litres).toBeCloseTo(50_000, 3)
+    const ledger = await owner.get(`/api/vessels/${id}/ledger`)
+    expect(ledger.status).toBe(200)
+    const [first] = read<{ movements: { actId: string }[] }>(ledger).movements
+    expect((await owner.post(`/api/acts/${first?.actId}/reverse`, { id: newId(), reason: 'the whole day' })).status).toBe(201)
   }, 120_000)
 
   it('is for leads to bring in, and for auditors to take out', async () => {

@@ -15,7 +15,9 @@ beforeAll(async () => {
   // One of the demo's hands is in two breweries, so that the page that asks which is seen too; the other brewery has no vessels.
   await demo.db.asSuperuser(`insert into memberships (brewery_id, user_id, role)
     select b.id, u.id, 'cellarLead' from breweries b, users u where b.name = 'Quernhollow' and u.email = 'hand@sallowmere.example'`)
-  await demo.db.asSuperuser(`delete from vessels where brewery_id = (select id from breweries where name = 'Quernhollow')`)
+  // A ledger is never taken away; here alone, as if it had never been.
+  const emptied = ['reversals', 'movements', 'ledger_notes', 'vessel_events', 'vessels'].map(table => `delete from ${table} where brewery_id = (select id from breweries where name = 'Quernhollow')`)
+  await demo.db.asSuperuser(['begin', 'set local session_replication_role = replica', ...emptied, 'commit'].join(';'))
 })
 afterAll(async () => {
   await browser.close()
@@ -53,7 +55,7 @@ const STATES: Record<string, State> = {
     as: LEAD,
     at: '/you',
     async then({ page }) {
-      await page.route('**/api/vessels', route => route.abort())
+      await page.route('**/api/vessels?*', route => route.abort())
       await page.getByRole('link', { name: 'Cellar', exact: true }).click()
       await page.getByText('The cellar could not be read.').waitFor()
     },
@@ -62,7 +64,7 @@ const STATES: Record<string, State> = {
     as: LEAD,
     at: '/you',
     async then({ page }) {
-      await page.route('**/api/vessels', () => {})
+      await page.route('**/api/vessels?*', () => {})
       await page.getByRole('link', { name: 'Cellar', exact: true }).click()
       await page.getByText('Reading what stands in the cellar').waitFor()
     },
@@ -96,6 +98,65 @@ const STATES: Record<string, State> = {
       await person.page.getByRole('dialog').waitFor()
     },
   },
+  'cellar, looking back': { as: LEAD, at: '/cellar?on=2022-05-03' },
+  'a vessel’s page': { as: LEAD, at: '/cellar', then: openHeron },
+  'a vessel’s page, to read only': { as: 'auditor@sallowmere.example', at: '/cellar', then: openHeron },
+  'a vessel’s page, with its reckonings told': {
+    as: LEAD,
+    at: '/cellar',
+    async then(person) {
+      await openHeron(person)
+      for (const how of await person.page.getByText('how', { exact: true }).all()) await how.click()
+      await press('Record what befell it')(person)
+      await press('All lines')(person)
+    },
+  },
+  'a line to be struck out': {
+    as: LEAD,
+    at: '/cellar',
+    async then(person) {
+      await openHeron(person)
+      await person.page.getByRole('button', { name: /^Correct Draw of 23 March 2026/ }).click()
+      await press('Strike it out')(person)
+      await person.page.getByText('One field needs another look.').waitFor()
+    },
+  },
+  'draw and refill': { as: 'packaging@sallowmere.example', at: '/cellar', then: person => openAct(person, 'Draw and refill') },
+  'draw and refill, of more than there is, wrongly filled': {
+    as: LEAD,
+    at: '/cellar',
+    async then(person) {
+      await openAct(person, 'Draw and refill')
+      await person.page.getByLabel('Out', { exact: true }).fill('10000')
+      await person.page.getByLabel('In', { exact: true }).fill('rather a lot')
+      await press(/^Keep/)(person)
+      await person.page.getByText(/fields need another look/).waitFor()
+    },
+  },
+  'fill': { as: LEAD, at: '/cellar', then: person => openAct(person, 'Fill') },
+  'move': {
+    as: LEAD,
+    at: '/cellar',
+    async then(person) {
+      await openAct(person, 'Move')
+      await person.page.getByLabel('Out', { exact: true }).fill('100')
+      await person.page.getByLabel('Into', { exact: true }).selectOption('Grebe')
+      await person.page.getByRole('region', { name: 'Grebe before and after' }).waitFor()
+    },
+  },
+  'loss': { as: LEAD, at: '/cellar', then: person => openAct(person, 'Loss') },
+  'brews': { as: LEAD, at: '/brews' },
+  'a brew to change': { as: LEAD, at: '/brews', then: press('Change FB26-1') },
+  'ledger': { as: LEAD, at: '/ledger' },
+  'ledger, to take out only': { as: 'auditor@sallowmere.example', at: '/ledger' },
+  'ledger, with a bad line': {
+    as: LEAD,
+    at: '/ledger',
+    async then({ page }) {
+      await page.getByLabel('Choose a file').setInputFiles({ name: 'bad.csv', mimeType: 'text/csv', buffer: Buffer.from('date;act;vessel;litres\n2026-18-08;draw;Heron;5\n') })
+      await page.getByRole('heading', { name: 'Lines to put right' }).waitFor()
+    },
+  },
   'your own page': { as: LEAD, at: '/you' },
   'a taster’s own page': { as: 'taster@sallowmere.example', at: '/you' },
   'a page that is not there': { as: LEAD, at: '/nowhere' },
@@ -108,7 +169,19 @@ async function loseNetwork({ context, page }: Person): Promise<void> {
   await page.getByText('No network since').waitFor()
 }
 
+async function openHeron({ page }: Person): Promise<void> {
+  await page.getByRole('link', { name: /Heron$/ }).click()
+  await page.getByRole('heading', { level: 1, name: 'Heron' }).waitFor()
+}
+
+async function openAct(person: Person, name: string): Promise<void> {
+  await openHeron(person)
+  await person.page.getByRole('navigation', { name: 'Acts' }).getByRole('link', { name, exact: true }).click()
+  await person.page.getByRole('heading', { level: 1, name: `${name}: Heron` }).waitFor()
+}
+
 async function changeHeron({ page }: Person): Promise<void> {
+  await page.getByRole('link', { name: /Heron$/ }).click()
   await page.getByRole('link', { name: 'Change Heron' }).click()
   await page.getByLabel('Working litres').waitFor()
 }

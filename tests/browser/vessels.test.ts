@@ -30,7 +30,7 @@ afterEach(async () => {
 
 const keep = () => page.getByRole('button', { name: /^Keep/ })
 const undo = () => page.getByRole('button', { name: 'Undo' })
-const names = async () => (await page.getByRole('listitem').getByRole('heading', { level: 2 }).allInnerTexts()).map(text => text.replace(/^\d+ /, ''))
+const names = async () => (await page.getByRole('listitem').getByRole('heading', { level: 2 }).allInnerTexts()).map(text => text.replace(/^\d+\s+/, ''))
 
 async function fillNew(name: string, litres: string): Promise<void> {
   await page.getByLabel('Name').fill(name)
@@ -40,6 +40,7 @@ async function fillNew(name: string, litres: string): Promise<void> {
 
 async function change(name: string): Promise<void> {
   await lead.goes('/cellar')
+  await page.getByRole('link', { name: new RegExp(`${name}$`) }).click()
   await page.getByRole('link', { name: `Change ${name}` }).click()
   await page.getByRole('heading', { name: `Change ${name}` }).waitFor()
 }
@@ -72,13 +73,17 @@ describe('a vessel', () => {
   })
 
   it('is taken away, and put back by undo', async () => {
-    await change('Teal One')
+    await lead.goes('/vessels/new')
+    await fillNew('Scaup', '225')
+    await keep().click()
+    await lead.arrives('/cellar')
+    await change('Scaup')
     await page.getByRole('button', { name: 'Take this vessel away' }).click()
     await lead.arrives('/cellar')
-    await expect.poll(names).not.toContain('Teal One')
+    await expect.poll(names).not.toContain('Scaup')
     await undo().click()
-    await page.getByText('Teal One stands in the cellar again.').waitFor()
-    await expect.poll(names).toContain('Teal One')
+    await page.getByText('Scaup stands in the cellar again.').waitFor()
+    await expect.poll(names).toContain('Scaup')
   })
 
   it('shows the one who comes second what the first one set, and sets theirs on top of it', async () => {
@@ -210,16 +215,18 @@ describe('the form of a vessel', () => {
 describe('the cellar', () => {
   it('says that it could not be read, and reads it when asked again', async () => {
     await lead.goes('/you')
-    await page.route('**/api/vessels', route => route.fulfill({ status: 500, body: 'out of order' }))
+    await page.route('**/api/vessels?*', route => route.fulfill({ status: 500, body: 'out of order' }))
     await page.getByRole('link', { name: 'Cellar', exact: true }).click()
     await page.getByRole('alert').getByText('The cellar could not be read.').waitFor()
-    await page.unroute('**/api/vessels')
+    await page.unroute('**/api/vessels?*')
     await page.getByRole('button', { name: 'Try now' }).click()
     await page.getByRole('img', { name: /^Heron/ }).waitFor()
   })
 
   it('says so when the way on leads through a network that is not there', async () => {
     await lead.goes('/cellar')
+    await page.getByRole('link', { name: /Heron$/ }).click()
+    await page.getByRole('heading', { level: 1, name: 'Heron' }).waitFor()
     await page.waitForLoadState('networkidle')
     await lead.context.setOffline(true)
     await page.getByRole('link', { name: 'Change Heron' }).click()
@@ -231,7 +238,7 @@ describe('the cellar', () => {
 
   it('shows nothing while it is read quickly, and a filling bar when it takes longer', async () => {
     await lead.goes('/you')
-    await page.route('**/api/vessels', async (route) => {
+    await page.route('**/api/vessels?*', async (route) => {
       await new Promise(resolve => setTimeout(resolve, 1500))
       await route.continue()
     })
@@ -244,8 +251,8 @@ describe('the cellar', () => {
     await lead.goes('/cellar')
     await page.getByRole('button', { name: 'The same as a table' }).click()
     const rows = await page.getByRole('table', { name: 'The vessels of the cellar in walking order' }).getByRole('row').allInnerTexts()
-    expect(rows[0]).toBe('Vessel\tKind\tStanding\tHolds\tRoom')
-    expect(rows[1]?.split('\t').map(text => text.trim())).toEqual(['1 Heron', 'Vat', 'Dry', 'empty', '4,000\u00A0L'])
+    expect(rows[0]).toBe('Vessel\tKind\tStanding\tHolds\tRoom\tA tenth is younger than\tA tenth is older than\tLook at')
+    expect(rows[1]?.split('\t').map(text => text.trim())).toEqual(['1 Heron', 'Vat', 'Called', '4,000\u00A0L, 2.14\u00A0y', '4,000\u00A0L', '210\u00A0d', '1,771\u00A0d', ''])
   })
 
   it('is black on white on paper, without anything to press', async () => {

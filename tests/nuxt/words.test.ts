@@ -12,7 +12,7 @@ describe('words of the cellar', () => {
 
   it('tells a filled one by its litres and their mean age, weighed by litres', () => {
     const vessels = [aVessel({ litres: 3000, meanAgeDays: 730.5 }), aVessel({ litres: 1000, meanAgeDays: 1461 }), aVessel()]
-    expect(cellarSentence(vessels)).toBe('4,000 litres in two vessels, 2.50 years old on average. One is empty.')
+    expect(cellarSentence(vessels)).toBe('4,000 litres in three vessels, 2.50 years old on average. One is empty.')
   })
 
   it('counts in figures from twenty-one on', () => {

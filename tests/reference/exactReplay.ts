@@ -23,8 +23,8 @@ export class ExactCellar {
 
   apply(line: LedgerLine): void {
     const vessel = this.vessel(line.vesselId)
-    if (line.kind === 'in') {
-      add(vessel, line.brewId ?? '', exact(line.litres))
+    if (line.kind === 'in' || line.kind === 'addition') {
+      add(vessel, line.brewId ?? 'no beer', exact(line.litres))
       return
     }
     const had = this.litres(line.vesselId)

@@ -65,14 +65,29 @@ describe('whatever the ledger says', () => {
     }))
   })
 
-  it('a line struck out and entered again in its place changes nothing', () => {
+  it('a line struck out and entered again, as a new line of another act, changes nothing', () => {
     fc.assert(fc.property(ledger, fc.nat(), (lines, pick) => {
-      fc.pre(lines.length > 0)
-      const at = pick % lines.length
-      const without = lines.filter((_, n) => n !== at)
-      const again = [...without, { ...lines[at] as LedgerLine }].sort(inLedgerOrder)
+      const alone = lines.filter(one => lines.every(other => other === one || other.day !== one.day))
+      const struck = alone[pick % Math.max(1, alone.length)]
+      fc.pre(struck !== undefined)
+      const again = [...lines.filter(one => one !== struck), { ...struck, actId: 'a later act', position: 99 }].sort(inLedgerOrder)
       return alike(stacks(lines), stacks(again))
     }))
+  })
+
+  it('what is no beer takes room, is drawn off with the rest, and has no age', () => {
+    fc.assert(fc.property(ledger, day, litres, (lines, when, amount) => {
+      const whole = [...lines, line('addition', when, 'A', amount, { actId: 'fruit' })].sort(inLedgerOrder)
+      return stacks(whole).every((stack) => {
+        const share = stack.cohorts.reduce((sum, cohort) => sum + cohort.share, 0)
+        const beer = stack.cohorts.reduce((sum, cohort) => sum + cohort.litres, 0)
+        return share <= 1 + 1e-9 && beer <= stack.litres * (1 + 1e-9) + 1e-9
+      })
+    }))
+    const [a] = stacks([fill(10, 'A', 100), line('addition', 20, 'A', 100), line('draw', 30, 'A', 100)])
+    expect(a).toMatchObject({ litres: 100, cohorts: [{ litres: 50, share: 0.5 }] })
+    expect(agePictureOf(a ?? { litres: 0, cohorts: [], volumeDoubt: false })?.meanDays).toBe(990)
+    expect(agePictureOf(stacks([line('addition', 20, 'A', 100)])[0] ?? { litres: 0, cohorts: [], volumeDoubt: false })).toBeNull()
   })
 
   it('a draw split in two on one day gives the same', () => {
@@ -99,6 +114,11 @@ describe('more out than there was', () => {
     expect(moved(150, 20).map(stack => [stack.litres, stack.volumeDoubt])).toEqual([[0, true], [80, false], [0, false], [0, false]])
     expect(moved(150, 120)[1]).toMatchObject({ litres: 0, cohorts: [] })
   })
+})
+
+it('a move that brings nothing is no refill', () => {
+  const cellar = replay([fill(10, 'A', 100), fill(10, 'B', 100), line('move', 20, 'A', 5, { toVesselId: 'B', lossLitres: 5 }), line('move', 30, 'C', 5, { toVesselId: 'B', lossLitres: 0 })])
+  expect(cellar.vessels.get('B')?.lastRefillDay).toBeNull()
 })
 
 it('an emptied vessel keeps no residue, however it was emptied', () => {

@@ -1,5 +1,6 @@
-import { and, asc, eq, inArray, sql } from 'drizzle-orm'
+import { and, asc, eq, sql } from 'drizzle-orm'
 import { isMovementKind, type LedgerLine } from '#shared/cellar/movement'
+import { anyOf } from '../anyOf'
 import type { Tx } from '../client'
 import { acts, beers, ledgerNotes, movements, reversals, users } from '../schema'
 
@@ -82,7 +83,16 @@ export async function reversalsOf(tx: Tx, breweryId: string, movementIds: string
   if (movementIds.length === 0) return []
   const rows = await tx.select({ reversal: reversals, name: users.name }).from(reversals)
     .innerJoin(users, eq(users.id, reversals.reversedBy))
-    .where(and(eq(reversals.breweryId, breweryId), inArray(reversals.movementId, movementIds)))
+    .where(and(eq(reversals.breweryId, breweryId), anyOf(reversals.movementId, movementIds)))
+  return rows.map(({ reversal, name }) => ({ ...reversal, reversedByName: name }))
+}
+
+/** What one request struck out. */
+export async function reversalsByRequest(tx: Tx, breweryId: string, requestId: string): Promise<ReversalWithName[]> {
+  const rows = await tx.select({ reversal: reversals, name: users.name }).from(reversals)
+    .innerJoin(users, eq(users.id, reversals.reversedBy))
+    .where(and(eq(reversals.breweryId, breweryId), eq(reversals.requestId, requestId)))
+    .orderBy(asc(reversals.id))
   return rows.map(({ reversal, name }) => ({ ...reversal, reversedByName: name }))
 }
 
@@ -105,7 +115,7 @@ export async function actsByIds(tx: Tx, breweryId: string, ids: string[]): Promi
   if (ids.length === 0) return []
   const rows = await tx.select({ act: acts, name: users.name }).from(acts)
     .innerJoin(users, eq(users.id, acts.recordedBy))
-    .where(and(eq(acts.breweryId, breweryId), inArray(acts.id, ids)))
+    .where(and(eq(acts.breweryId, breweryId), anyOf(acts.id, ids)))
   return rows.map(({ act, name }) => ({ ...act, recordedByName: name }))
 }
 

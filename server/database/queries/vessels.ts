@@ -1,4 +1,5 @@
 import { and, asc, eq, getTableColumns, max, sql } from 'drizzle-orm'
+import { WALKING_ORDER_MAX } from '#shared/cellar/vessel'
 import { preparedOnce, type Tx } from '../client'
 import { beers, vessels } from '../schema'
 
@@ -26,12 +27,12 @@ export async function vesselById(tx: Tx, breweryId: string, id: string): Promise
 
 /** The same, held until the transaction ends, so that nobody changes it between the look and the deed. */
 export async function lockedVesselById(tx: Tx, breweryId: string, id: string): Promise<VesselRow | undefined> {
-  const [row] = await tx.select().from(vessels).where(and(eq(vessels.breweryId, breweryId), eq(vessels.id, id))).for('update')
+  const [row] = await tx.select().from(vessels).where(and(eq(vessels.breweryId, breweryId), eq(vessels.id, id))).for('no key update')
   return row
 }
 
 /** The place behind the last vessel on the walk. */
 export async function nextPlaceOnTheWalk(tx: Tx, breweryId: string): Promise<number> {
   const [row] = await tx.select({ last: max(vessels.walkingOrder) }).from(vessels).where(eq(vessels.breweryId, breweryId))
-  return (row?.last ?? 0) + 1
+  return Math.min((row?.last ?? 0) + 1, WALKING_ORDER_MAX)
 }
