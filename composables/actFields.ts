@@ -102,6 +102,7 @@ export function lastLitres({ movements }: VesselLedger, vesselId: string, kind: 
 export function keepWords(kind: ActKind, fields: ActFields): string {
   const [out, into] = [litresOf(fields.out), litresOf(fields.into)]
   const told = (litres: number | null) => litres === null ? '–' : litres.toLocaleString('en-GB', { maximumFractionDigits: 3 })
+  if (out === null && into === null) return 'Keep the act'
   if (kind === 'draw') return into === null ? `Keep ${told(out)} out` : `Keep ${told(out)} out, ${told(into)} in`
   if (kind === 'fill') return `Keep ${told(into)} in`
   return kind === 'move' ? `Keep ${told(out)} moved` : `Keep ${told(out)} lost`

@@ -30,7 +30,8 @@ export function openDatabase(url: string, { connections = 10, onIdleError = () =
     // A statement that takes longer than this holds up everybody else.
     statement_timeout: 15_000,
     lock_timeout: 5_000,
-    idle_in_transaction_session_timeout: 30_000,
+    // A long file is read while its transaction waits for it.
+    idle_in_transaction_session_timeout: 120_000,
     application_name: 'undercroft',
     // What is asked together goes out together: a transaction is begun and its brewery opened in one round trip.
     pipeline: true,

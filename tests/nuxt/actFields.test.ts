@@ -35,5 +35,5 @@ describe('the faults of an act', () => {
 it('repeats the numbers on the button that keeps it', () => {
   expect(keepWords('draw', FILLED)).toBe('Keep 1,000 out, 990.5 in')
   expect(keepWords('draw', { ...FILLED, into: '' })).toBe('Keep 1,000 out')
-  expect(keepWords('loss', emptyAct('2026-09-14'))).toBe('Keep – lost')
+  expect(keepWords('loss', emptyAct('2026-09-14'))).toBe('Keep the act')
 })
